@@ -1,0 +1,3 @@
+//! One file for each question a user asks; each returns plain data.
+
+pub mod shortlist;

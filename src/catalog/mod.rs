@@ -1,0 +1,1 @@
+//! From tables of text to typed parts.

@@ -1,0 +1,1 @@
+//! Currents, losses, temperatures and ripple of a stage at a point: pure functions.

@@ -1,0 +1,1 @@
+//! Engineering notation for people.

@@ -1,0 +1,1 @@
+//! Decimal text, prefix and unit to the nearest `f64`.

@@ -1,0 +1,1 @@
+//! The best stages of all, with proof.

@@ -1,0 +1,1 @@
+//! Plain data to text.
