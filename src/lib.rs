@@ -8,23 +8,27 @@
 //! 3. [`part`]: typed parts and their laws at a working point.
 //! 4. [`rail`]: the supply to be built, typed, and the file it is written in.
 //! 5. [`catalog`]: the lists of approved parts, from tables of text to typed parts.
-//! 6. [`stage`]: one combination of parts, counts and a frequency.
+//! 6. [`stage`]: one combination of parts, counts and a frequency; [`footing`]: what parts cost and take up.
 //! 7. [`model`]: currents, losses, temperatures and ripple of a stage at a point; pure functions.
-//! 8. [`limit`]: everything that can refuse a stage.
-//! 9. [`account`]: every watt of one stage, by cause, at every point.
-//! 10. [`search`]: the best stages of all, with proof.
-//! 11. [`answer`]: one file for each question a user asks.
-//! 12. [`show`]: plain data to tables, CSV and JSON.
-//! 13. [`command`]: the command line.
+//! 8. [`burden`]: the one figure that is minimised.
+//! 9. [`limit`]: everything that can refuse a stage.
+//! 10. [`account`]: every watt of one stage, by cause, at every point.
+//! 11. [`search`]: the best stages of all, with proof.
+//! 12. [`answer`]: one file for each question a user asks.
+//! 13. [`demo`]: the built-in rail and catalogs.
+//! 14. [`show`]: plain data to tables, CSV and JSON.
+//! 15. [`command`]: the command line.
 #![forbid(unsafe_code)]
 #![warn(missing_docs)]
 
 pub mod account;
 pub mod answer;
+pub mod burden;
 pub mod catalog;
 pub mod command;
 pub mod demo;
 pub mod fault;
+pub mod footing;
 pub mod limit;
 pub mod model;
 pub mod part;

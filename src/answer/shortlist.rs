@@ -2,8 +2,23 @@
 
 use serde::Serialize;
 
+use crate::account::{Account, account};
 use crate::limit::LimitName;
+use crate::part::{Parts, Slot};
+use crate::rail::Rail;
+use crate::search::{Distinct, Dropped, Found, Ranked, Request, exhaustive::exhaustive};
 use crate::stage::NamedStage;
+
+/// How a shortlist is asked for.
+#[derive(Debug, Clone, Copy, PartialEq, Eq)]
+pub struct Options {
+    /// How many stages.
+    pub top: usize,
+    /// Which stages count as different.
+    pub distinct: Distinct,
+    /// Worker threads; 0 for one a processor.
+    pub threads: usize,
+}
 
 /// The limit that a stage comes nearest to.
 #[derive(Debug, Clone, Copy, PartialEq, Serialize)]
@@ -58,17 +73,6 @@ pub struct NearestMiss {
     pub with: NamedStage,
 }
 
-/// Parts of one slot dropped before crossing because they break a limit of their own.
-#[derive(Debug, Clone, Copy, PartialEq, Serialize)]
-pub struct Dropped {
-    /// Which limit.
-    pub limit: LimitName,
-    /// [`Slot`](crate::part::Slot) name.
-    pub slot: &'static str,
-    /// How many parts.
-    pub parts: usize,
-}
-
 /// The k best stages, proven.
 #[derive(Debug, Clone, PartialEq)]
 pub struct Shortlist {
@@ -86,4 +90,69 @@ pub struct Shortlist {
     pub dropped: Vec<Dropped>,
     /// When nothing passes: each limit alone.
     pub nothing_passes: Option<Vec<NearestMiss>>,
+}
+
+/// The k best stages; when nothing passes, how far each limit alone would have to give.
+pub fn shortlist(rail: &Rail, parts: &Parts, options: &Options) -> Shortlist {
+    let request = Request {
+        rail,
+        parts,
+        top: options.top,
+        distinct: options.distinct,
+        threads: options.threads,
+        tolerated: None,
+    };
+    let Found { ranked, crossed, evaluated, proven, dropped } = exhaustive(&request);
+    let picks: Vec<Pick> =
+        ranked.iter().enumerate().filter_map(|(place, ranked)| pick(rail, parts, place + 1, ranked)).collect();
+    let nothing_passes = ranked.is_empty().then(|| nearest_misses(&request));
+    Shortlist { rail: rail.name.clone(), crossed, evaluated, proven, picks, dropped, nothing_passes }
+}
+
+/// A line of the shortlist; `None` only for a stage that does not pass.
+fn pick(rail: &Rail, parts: &Parts, rank: usize, ranked: &Ranked) -> Option<Pick> {
+    let account = account(rail, parts, &ranked.stage);
+    let tightest = account
+        .limits
+        .iter()
+        .filter_map(|row| row.margin.map(|margin| Tightest { limit: row.limit, margin }))
+        .min_by(|a, b| a.margin.total_cmp(&b.margin));
+    let junction = |row: &&crate::account::LimitRow| row.limit == LimitName::Junction;
+    Some(Pick {
+        rank,
+        burden: account.burden?,
+        cost: account.cost,
+        area_mm2: account.area_mm2,
+        weighted_loss_w: account.weighted_loss_w?,
+        weighted_efficiency: account.weighted_efficiency?,
+        resistance_w: account.resistance_w?,
+        charge_w: account.charge_w?,
+        hottest_junction_c: account.limits.iter().filter(junction).filter_map(|row| row.value).reduce(f64::max)?,
+        tightest,
+        assumed: account.assumed.len(),
+        core_loss_unknown: core_loss_unknown(&account),
+        stage: account.stage,
+    })
+}
+
+fn core_loss_unknown(account: &Account) -> bool {
+    account.assumed.iter().any(|row| row.slot == Slot::Inductor.name() && row.quantity == "core_loss")
+}
+
+fn nearest_misses(request: &Request) -> Vec<NearestMiss> {
+    LimitName::ALL
+        .into_iter()
+        .filter(|limit| limit.can_give())
+        .filter_map(|limit| {
+            let found = exhaustive(&Request { tolerated: Some(limit), top: 1, ..*request });
+            let nearest = found.ranked.first()?;
+            let account = account(request.rail, request.parts, &nearest.stage);
+            let broken = account
+                .limits
+                .into_iter()
+                .filter(|row| row.limit == limit && !row.holds)
+                .min_by_key(|row| ordered_float::OrderedFloat(row.margin.unwrap_or(f64::NEG_INFINITY)))?;
+            Some(NearestMiss { limit, bound: broken.bound?, needed: broken.value?, with: account.stage })
+        })
+        .collect()
 }

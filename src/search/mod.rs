@@ -1,1 +1,15 @@
 //! The best stages of all, with proof.
+//!
+//! [`field`] fits every part to the rail once, [`trial`] judges one core and its banks, [`order`] says which of two stages comes
+//! first, [`leaders`] keeps the best. [`exhaustive`] tries every stage.
+
+pub mod exhaustive;
+pub mod field;
+pub mod leaders;
+pub mod order;
+pub mod request;
+pub mod trial;
+
+pub use field::{Dropped, Field};
+pub use order::Ranked;
+pub use request::{Distinct, Found, Request};

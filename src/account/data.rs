@@ -1,79 +1,11 @@
-//! Every watt of one stage, by cause, at every point.
+//! What an account holds.
 
 use serde::Serialize;
 
 use crate::limit::LimitName;
+use crate::model::Conduction;
+pub use crate::model::losses::{BankLosses, DriveLosses, HighSwitchLosses, InductorLosses, Losses, RectifierLosses};
 use crate::stage::NamedStage;
-
-/// Losses of the high switch, W.
-#[derive(Debug, Clone, Copy, Default, PartialEq, Serialize)]
-pub struct HighSwitchLosses {
-    /// On-resistance.
-    pub conduction: f64,
-    /// Voltage and current together in the channel at both edges.
-    pub overlap: f64,
-    /// Charging the switch node.
-    pub output_charge: f64,
-    /// Recovery of the rectifier.
-    pub recovery: f64,
-}
-
-/// Losses of the rectifier, W.
-#[derive(Debug, Clone, Copy, Default, PartialEq, Serialize)]
-pub struct RectifierLosses {
-    /// On-resistance or forward drop.
-    pub conduction: f64,
-    /// Body diode during dead time.
-    pub dead_time: f64,
-    /// Reverse leakage.
-    pub leakage: f64,
-}
-
-/// Losses of the inductor, W.
-#[derive(Debug, Clone, Copy, Default, PartialEq, Serialize)]
-pub struct InductorLosses {
-    /// Load current in the winding.
-    pub winding_dc: f64,
-    /// Ripple current in the winding.
-    pub winding_ac: f64,
-    /// Core.
-    pub core: f64,
-}
-
-/// Losses of a bank, W.
-#[derive(Debug, Clone, Copy, Default, PartialEq, Serialize)]
-pub struct BankLosses {
-    /// Equivalent series resistance.
-    pub esr: f64,
-}
-
-/// Losses in the gate supply, W.
-#[derive(Debug, Clone, Copy, Default, PartialEq, Serialize)]
-pub struct DriveLosses {
-    /// Gate charge of the high switch.
-    pub high_gate: f64,
-    /// Gate charge of a switch rectifier.
-    pub rectifier_gate: f64,
-    /// Controller.
-    pub bias: f64,
-}
-
-/// Every loss of a stage at a point, W.
-#[derive(Debug, Clone, Copy, Default, PartialEq, Serialize)]
-pub struct Losses {
-    /// High switch.
-    pub high_switch: HighSwitchLosses,
-    /// Rectifier.
-    pub rectifier: RectifierLosses,
-    /// Inductor.
-    pub inductor: InductorLosses,
-    /// Input bank.
-    pub input_bank: BankLosses,
-    /// Output bank.
-    pub output_bank: BankLosses,
-    /// Gates and controller.
-    pub drive: DriveLosses,
-}
 
 /// Rms currents, A; the rectifier's is that of its channel.
 #[derive(Debug, Clone, Copy, Default, PartialEq, Serialize)]
@@ -115,6 +47,15 @@ pub enum Mode {
     Runaway,
     /// The gate supply does not reach the plateau of the current to be switched.
     Underdriven,
+}
+
+impl From<Conduction> for Mode {
+    fn from(conduction: Conduction) -> Self {
+        match conduction {
+            Conduction::Continuous => Self::Continuous,
+            Conduction::Discontinuous => Self::Discontinuous,
+        }
+    }
 }
 
 /// The numbers of a point at which the stage runs.

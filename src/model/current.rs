@@ -1,0 +1,157 @@
+//! Duty and currents at given resistances and drops.
+
+/// How the inductor conducts.
+#[derive(Debug, Clone, Copy, PartialEq, Eq)]
+pub enum Conduction {
+    /// The current never rests at zero.
+    Continuous,
+    /// It rests at zero in each period.
+    Discontinuous,
+}
+
+/// What the currents depend on, at one point and given temperatures.
+#[derive(Debug, Clone, Copy, PartialEq)]
+pub struct Circuit {
+    /// Input, V.
+    pub input_v: f64,
+    /// Output, V.
+    pub output_v: f64,
+    /// Load, A.
+    pub load_a: f64,
+    /// Switching frequency, Hz.
+    pub frequency_hz: f64,
+    /// Inductance, H.
+    pub inductance_h: f64,
+    /// Resistance of the high switch, Ω.
+    pub high_ohm: f64,
+    /// Resistance of the winding, Ω.
+    pub winding_ohm: f64,
+    /// Share of the period in which both switches of a switch rectifier are off; 0 for a diode.
+    pub dead_share: f64,
+    /// Body diode drop during it, V; 0 for a diode.
+    pub body_drop_v: f64,
+}
+
+/// The rectifier's drop at a current: `threshold_v` + `resistance_ohm`·I.
+#[derive(Debug, Clone, Copy, PartialEq)]
+pub struct Drop {
+    /// Drop extended to no current, V; 0 for a switch.
+    pub threshold_v: f64,
+    /// Slope resistance, Ω.
+    pub resistance_ohm: f64,
+}
+
+impl Drop {
+    /// Drop at a current, V.
+    pub fn at_v(&self, current_a: f64) -> f64 {
+        self.threshold_v + self.resistance_ohm * current_a
+    }
+}
+
+/// Currents of one period. Squares are mean squares, A².
+#[derive(Debug, Clone, Copy, PartialEq)]
+pub struct Currents {
+    /// Mode.
+    pub conduction: Conduction,
+    /// On-time of the high switch / period.
+    pub duty: f64,
+    /// Share of the period in which the inductor current falls.
+    pub fall: f64,
+    /// Inductor ripple, A peak to peak.
+    pub ripple_a: f64,
+    /// Greatest inductor current, A.
+    pub peak_a: f64,
+    /// Least inductor current, A.
+    pub valley_a: f64,
+    /// High switch.
+    pub high_a2: f64,
+    /// Rectifier channel.
+    pub rectifier_a2: f64,
+    /// Mean rectifier current outside dead time, A.
+    pub rectifier_mean_a: f64,
+    /// Inductor.
+    pub inductor_a2: f64,
+    /// Input bank.
+    pub input_bank_a2: f64,
+    /// Output bank.
+    pub output_bank_a2: f64,
+}
+
+/// The input is too low for the output.
+#[derive(Debug, Clone, Copy, PartialEq, Eq)]
+pub struct Dropout;
+
+/// Continuous conduction, by averaging with all drops at the load current (Erickson & Maksimović, ch. 3; switch and
+/// capacitor rms: TI SLUS774B eq. 16 and 39, SLUS676A eq. 23). The ripple can come out negative where the input does not
+/// reach the output; [`continuous`] then reports dropout because the duty reaches 1.
+///
+/// # Errors
+/// [`Dropout`] when on-time and dead time fill the period.
+pub fn continuous(circuit: &Circuit, drop: Drop) -> Result<Currents, Dropout> {
+    let i = circuit.load_a;
+    let dead = circuit.dead_share;
+    let drop_v = drop.at_v(i);
+    let duty = (circuit.output_v + i * circuit.winding_ohm + (1.0 - dead) * drop_v + dead * circuit.body_drop_v)
+        / (circuit.input_v - i * circuit.high_ohm + drop_v);
+    if !(duty > 0.0 && duty + dead < 1.0) {
+        return Err(Dropout);
+    }
+    let on_v = circuit.input_v - circuit.output_v - i * (circuit.high_ohm + circuit.winding_ohm);
+    let ripple_a = on_v * duty / (circuit.inductance_h * circuit.frequency_hz);
+    let ripple_a2 = ripple_a * ripple_a / 12.0;
+    let inductor_a2 = i * i + ripple_a2;
+    Ok(Currents {
+        conduction: Conduction::Continuous,
+        duty,
+        fall: 1.0 - duty,
+        ripple_a,
+        peak_a: i + ripple_a / 2.0,
+        valley_a: i - ripple_a / 2.0,
+        high_a2: duty * inductor_a2,
+        rectifier_a2: (1.0 - duty - dead) * inductor_a2,
+        rectifier_mean_a: (1.0 - duty) * i,
+        inductor_a2,
+        input_bank_a2: duty * (1.0 - duty) * i * i + duty * ripple_a2,
+        output_bank_a2: ripple_a2,
+    })
+}
+
+/// Discontinuous conduction, by charge balance with drops at half the peak `peak_a` of the previous step (Erickson &
+/// Maksimović, ch. 5). To be repeated until the peak stays.
+///
+/// # Errors
+/// [`Dropout`] when nothing is left to drive the current up.
+pub fn discontinuous(circuit: &Circuit, drop: Drop, peak_a: f64) -> Result<Currents, Dropout> {
+    let i = circuit.load_a;
+    let half_a = peak_a / 2.0;
+    let on_v = circuit.input_v - circuit.output_v - (circuit.high_ohm + circuit.winding_ohm) * half_a;
+    let off_v = circuit.output_v + circuit.winding_ohm * half_a + drop.at_v(half_a);
+    let henry_hz = circuit.inductance_h * circuit.frequency_hz;
+    if !(on_v > 0.0 && off_v > 0.0) {
+        return Err(Dropout);
+    }
+    let duty = (2.0 * henry_hz * i * off_v / (on_v * (on_v + off_v))).sqrt();
+    if duty + circuit.dead_share >= 1.0 {
+        return Err(Dropout);
+    }
+    let fall = duty * on_v / off_v;
+    let peak_a = on_v * duty / henry_hz;
+    let third_a2 = peak_a * peak_a / 3.0;
+    let high_a2 = third_a2 * duty;
+    let inductor_a2 = third_a2 * (duty + fall);
+    let high_mean_a = duty * peak_a / 2.0;
+    Ok(Currents {
+        conduction: Conduction::Discontinuous,
+        duty,
+        fall,
+        ripple_a: peak_a,
+        peak_a,
+        valley_a: 0.0,
+        high_a2,
+        rectifier_a2: third_a2 * fall,
+        rectifier_mean_a: peak_a * fall / 2.0,
+        inductor_a2,
+        input_bank_a2: high_a2 - high_mean_a * high_mean_a,
+        output_bank_a2: inductor_a2 - i * i,
+    })
+}

@@ -1,0 +1,126 @@
+//! Losses in the high switch: both edges, the node's charge and the rectifier's recovery.
+
+use super::current::{Conduction, Currents};
+use crate::part::SwitchBank;
+
+/// What the high switch meets at its edges, at one point.
+#[derive(Debug, Clone, Copy, PartialEq)]
+pub struct Node {
+    /// Input, V.
+    pub input_v: f64,
+    /// Voltage through which the node is pulled at turn-on, V: the input, less the output in discontinuous conduction.
+    pub swing_v: f64,
+    /// Output charge of the high switch at the input voltage, C.
+    pub own_at_input_c: f64,
+    /// Charge of the rectifier at the input voltage, C.
+    pub rectifier_at_input_c: f64,
+    /// Output charge of the high switch at the swing, C.
+    pub own_at_swing_c: f64,
+    /// Charge of the rectifier at the swing, C.
+    pub rectifier_at_swing_c: f64,
+    /// Recovery charge of the rectifier, C.
+    pub recovery_c: f64,
+}
+
+/// Gate drive of the high switch.
+#[derive(Debug, Clone, Copy, PartialEq)]
+pub struct GateDrive {
+    /// Gate supply, V.
+    pub gate_v: f64,
+    /// Driver and external resistance while charging, Ω.
+    pub pull_up_ohm: f64,
+    /// The same while discharging, Ω.
+    pub pull_down_ohm: f64,
+}
+
+/// The plateau of a current to be switched lies at or above the gate supply.
+#[derive(Debug, Clone, Copy, PartialEq)]
+pub struct Underdriven {
+    /// Gate supply, V.
+    pub gate_v: f64,
+    /// That plateau, V.
+    pub plateau_v: f64,
+}
+
+/// Channel energy of one turn-on at `valley_a` (0 when the current is reversed), J.
+///
+/// The channel carries the load and Q/t while the node falls; the gate sits at the plateau of both, and the extra gate
+/// travel delays the edge (Kirchhoff at the node with the Miller relation dV/dt = Ig/Cgd).
+fn turn_on_j(switch: &SwitchBank, drive: &GateDrive, node_v: f64, node_c: f64, valley_a: f64) -> f64 {
+    let ohm = drive.pull_up_ohm + switch.gate_resistance_ohm;
+    let gm = switch.transconductance_s;
+    let plateau_v = switch.plateau_at_v(valley_a);
+    let headroom_v = drive.gate_v - plateau_v;
+    let current_rise_s =
+        ohm * switch.gate_capacitance_f * (valley_a / gm) / (drive.gate_v - (switch.threshold_v + plateau_v) / 2.0);
+    let voltage_fall_s = (ohm * switch.miller_charge_c + node_c / gm) / headroom_v;
+    let lift_v = node_c / (voltage_fall_s * gm);
+    let lag_s = ohm * switch.gate_capacitance_f * lift_v / (headroom_v - lift_v / 2.0);
+    0.5 * node_v * valley_a * (current_rise_s + voltage_fall_s + lag_s)
+}
+
+/// Channel energy of one turn-off at `peak_a`, J: 0 where the node's charge takes the whole current.
+fn turn_off_j(switch: &SwitchBank, drive: &GateDrive, node_v: f64, node_c: f64, peak_a: f64) -> f64 {
+    let ohm = drive.pull_down_ohm + switch.gate_resistance_ohm;
+    let gm = switch.transconductance_s;
+    let voltage_rise_s = (ohm * switch.miller_charge_c + node_c / gm) / switch.plateau_at_v(peak_a);
+    let channel_a = peak_a - node_c / voltage_rise_s;
+    if channel_a <= 0.0 {
+        return 0.0;
+    }
+    let travel_v = channel_a / gm;
+    let current_fall_s = ohm * switch.gate_capacitance_f * travel_v / (switch.threshold_v + travel_v / 2.0);
+    0.5 * node_v * channel_a * (voltage_rise_s + current_fall_s)
+}
+
+/// Overlap energy of both edges in one period, J, with turn-on at `valley_a` and turn-off at `peak_a`; `node_c` is the
+/// charge of everything at the node, C, `node_v` the input, V.
+///
+/// # Errors
+/// [`Underdriven`] when the gate supply does not exceed the plateau of either current.
+pub fn overlap_j(
+    switch: &SwitchBank,
+    drive: &GateDrive,
+    node_v: f64,
+    node_c: f64,
+    valley_a: f64,
+    peak_a: f64,
+) -> Result<(f64, f64), Underdriven> {
+    let valley_a = valley_a.max(0.0);
+    let plateau_v = switch.plateau_at_v(peak_a.max(valley_a));
+    if plateau_v >= drive.gate_v {
+        return Err(Underdriven { gate_v: drive.gate_v, plateau_v });
+    }
+    Ok((turn_on_j(switch, drive, node_v, node_c, valley_a), turn_off_j(switch, drive, node_v, node_c, peak_a)))
+}
+
+/// Energy lost in charging the node once, J: a third of the own charge (its energy is Q·V/3 when C ∝ V^−1/2), two thirds
+/// of the rectifier's; nothing where the reversed inductor current does it.
+fn output_charge_j(node: &Node, currents: &Currents, inductance_h: f64) -> f64 {
+    let node_c = node.own_at_input_c + node.rectifier_at_input_c;
+    let valley_a = currents.valley_a;
+    match currents.conduction {
+        Conduction::Continuous if valley_a < 0.0 && inductance_h * valley_a * valley_a >= node_c * node.input_v => 0.0,
+        Conduction::Continuous => (node.own_at_input_c / 3.0 + 2.0 * node.rectifier_at_input_c / 3.0) * node.input_v,
+        Conduction::Discontinuous => (node.own_at_swing_c / 3.0 + 2.0 * node.rectifier_at_swing_c / 3.0) * node.swing_v,
+    }
+}
+
+/// Losses of the high switch that do not depend on its temperature, W: overlap, output charge, recovery.
+///
+/// # Errors
+/// [`Underdriven`] as in [`overlap_j`].
+pub fn switching_w(
+    switch: &SwitchBank,
+    drive: &GateDrive,
+    node: &Node,
+    currents: &Currents,
+    inductance_h: f64,
+    frequency_hz: f64,
+) -> Result<[f64; 3], Underdriven> {
+    let node_c = node.own_at_input_c + node.rectifier_at_input_c;
+    let (on_j, off_j) = overlap_j(switch, drive, node.input_v, node_c, currents.valley_a, currents.peak_a)?;
+    let recovers = currents.conduction == Conduction::Continuous && currents.valley_a >= 0.0;
+    let recovery_w = if recovers { node.recovery_c * node.input_v * frequency_hz } else { 0.0 };
+    Ok([frequency_hz * (on_j + off_j), output_charge_j(node, currents, inductance_h) * frequency_hz, recovery_w])
+}
