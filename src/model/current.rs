@@ -155,3 +155,64 @@ pub fn discontinuous(circuit: &Circuit, drop: Drop, peak_a: f64) -> Result<Curre
         output_bank_a2: inductor_a2 - i * i,
     })
 }
+
+#[cfg(test)]
+mod tests {
+    use super::*;
+    use approx::assert_relative_eq;
+
+    fn lossless(input_v: f64, output_v: f64, inductance_h: f64, frequency_hz: f64, load_a: f64) -> Circuit {
+        Circuit {
+            input_v,
+            output_v,
+            load_a,
+            frequency_hz,
+            inductance_h,
+            high_ohm: 0.0,
+            winding_ohm: 0.0,
+            dead_share: 0.0,
+            body_drop_v: 0.0,
+        }
+    }
+
+    // Derived by hand from the textbook formulas, six digits.
+    #[test]
+    fn continuous_vector() {
+        let circuit = lossless(12.0, 1.2, 0.47e-6, 500e3, 10.0);
+        let currents = continuous(&circuit, Drop { threshold_v: 0.0, resistance_ohm: 0.0 }).expect("it runs");
+        assert_relative_eq!(currents.ripple_a, 4.595745, max_relative = 2e-7);
+        assert_relative_eq!(currents.high_a2.sqrt(), 3.189985, max_relative = 2e-7);
+        assert_relative_eq!(currents.rectifier_a2.sqrt(), 9.569956, max_relative = 2e-7);
+        assert_relative_eq!(currents.input_bank_a2.sqrt(), 3.029193, max_relative = 2e-7);
+        assert_relative_eq!(currents.output_bank_a2.sqrt(), 1.326677, max_relative = 4e-7);
+    }
+
+    // Derived by hand from the textbook formulas, six digits.
+    #[test]
+    fn discontinuous_vector() {
+        let circuit = lossless(12.0, 3.3, 10e-6, 400e3, 0.15);
+        let drop = Drop { threshold_v: 0.45, resistance_ohm: 0.0 };
+        let currents = discontinuous(&circuit, drop, 0.0).expect("it runs");
+        let expect = |found: f64, six_digits: f64| assert_relative_eq!(found, six_digits, max_relative = 4e-6);
+        expect(currents.duty, 0.203827);
+        expect(currents.fall, 0.472879);
+        expect(currents.peak_a, 0.443324);
+        expect(currents.high_a2.sqrt(), 0.115556);
+        expect(currents.rectifier_mean_a, 0.104819);
+        expect(currents.rectifier_a2.sqrt(), 0.176009);
+        expect(currents.inductor_a2.sqrt(), 0.210553);
+        expect(currents.input_bank_a2.sqrt(), 0.106357);
+        expect(currents.output_bank_a2.sqrt(), 0.147758);
+        let boundary = continuous(&Circuit { load_a: 0.327560, ..circuit }, drop).expect("it runs");
+        expect(boundary.ripple_a / 2.0, 0.327560);
+    }
+
+    #[test]
+    fn an_input_that_does_not_reach_the_output_is_dropout() {
+        let drop = Drop { threshold_v: 0.4, resistance_ohm: 0.0 };
+        assert_eq!(continuous(&lossless(5.0, 5.0, 10e-6, 400e3, 1.0), drop), Err(Dropout));
+        assert_eq!(discontinuous(&lossless(5.0, 5.0, 10e-6, 400e3, 1.0), drop, 0.0), Err(Dropout));
+        let dead = Circuit { dead_share: 0.1, ..lossless(5.0, 4.6, 10e-6, 400e3, 1.0) };
+        assert_eq!(continuous(&dead, Drop { threshold_v: 0.0, resistance_ohm: 0.0 }), Err(Dropout));
+    }
+}

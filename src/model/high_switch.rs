@@ -124,3 +124,65 @@ pub fn switching_w(
     let recovery_w = if recovers { node.recovery_c * node.input_v * frequency_hz } else { 0.0 };
     Ok([frequency_hz * (on_j + off_j), output_charge_j(node, currents, inductance_h) * frequency_hz, recovery_w])
 }
+
+#[cfg(test)]
+mod tests {
+    use super::*;
+    use approx::assert_relative_eq;
+
+    fn switch(
+        threshold_v: f64,
+        plateau_v: f64,
+        at_a: f64,
+        post_threshold_c: f64,
+        miller_c: f64,
+        gate_ohm: f64,
+    ) -> SwitchBank {
+        SwitchBank {
+            r25_ohm: 0.01,
+            worst_r25_ohm: 0.01,
+            coefficient_per_k: 0.005,
+            gate_charge_c: 10e-9,
+            miller_charge_c: miller_c,
+            overdrive_charge_c: 0.0,
+            post_threshold_charge_c: post_threshold_c,
+            threshold_v,
+            plateau_v,
+            transconductance_s: at_a / (plateau_v - threshold_v),
+            gate_capacitance_f: post_threshold_c / (plateau_v - threshold_v),
+            gate_resistance_ohm: gate_ohm,
+            charge_at_input_c: [0.0; 3],
+            charge_at_swing_c: [0.0; 3],
+            recovery_c: 0.0,
+            body_drop_v: 0.8,
+            thermal_k_per_w: 40.0,
+            junction_limit_c: 150.0,
+            current_rating_a: None,
+            count: 1,
+        }
+    }
+
+    // The `closed_form_aware` columns of the circuit-simulation edge cases E03 and E07: the same law, computed elsewhere. They
+    // hold the stored energy too, which with linear capacitances is half of charge times voltage.
+    #[test]
+    fn edges_with_node_charge() {
+        let fast = GateDrive { gate_v: 5.0, pull_up_ohm: 1.5, pull_down_ohm: 0.8 };
+        let e03 = switch(1.6, 2.3, 6.0, 6.65e-10, 1.2e-9, 1.0);
+        let (on_j, off_j) = overlap_j(&e03, &fast, 24.0, 24.0 * 6.5e-10, 6.0, 6.0).expect("it switches");
+        assert_relative_eq!(on_j + 1.872e-7, 4.34575143e-7, max_relative = 1e-6);
+        assert_eq!(off_j, 0.0);
+        let slow = GateDrive { gate_v: 5.0, pull_up_ohm: 1.2, pull_down_ohm: 0.6 };
+        let e07 = switch(1.4, 2.2, 25.0, 2.56e-9, 2.4e-9, 0.7);
+        let (on_j, off_j) = overlap_j(&e07, &slow, 12.0, 12.0 * 2e-9, 25.0, 35.0).expect("it switches");
+        assert_relative_eq!(on_j + 1.44e-7, 7.99098474e-7, max_relative = 1e-6);
+        assert_relative_eq!(off_j, 3.56484848e-7, max_relative = 1e-6);
+    }
+
+    #[test]
+    fn a_plateau_at_the_gate_supply_is_underdriven() {
+        let drive = GateDrive { gate_v: 3.0, pull_up_ohm: 1.0, pull_down_ohm: 1.0 };
+        let weak = switch(1.5, 2.5, 8.0, 6.65e-10, 1.2e-9, 1.0);
+        let found = overlap_j(&weak, &drive, 24.0, 1e-9, 0.0, 12.0);
+        assert_eq!(found, Err(Underdriven { gate_v: 3.0, plateau_v: 3.0 }));
+    }
+}

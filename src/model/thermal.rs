@@ -82,3 +82,61 @@ const CLOSE_K: f64 = 1e-12;
 pub fn rising_w(at25_w: f64, coefficient_per_k: f64, temperature_c: f64) -> f64 {
     at25_w * (1.0 + coefficient_per_k * (temperature_c - 25.0))
 }
+
+#[cfg(test)]
+mod tests {
+    use super::*;
+    use crate::part::diode_bank::LeakageSpan;
+    use approx::assert_relative_eq;
+
+    // onsemi AND90146/D Rev 1, Tables 3 to 5: 0.504 W at 25 °C, 51 K/W; the source prints 175 °C at 127.5 °C ambient.
+    #[test]
+    fn linear_vector() {
+        let t = |ambient_c| linear_c(ambient_c, 51.0, 0.0, 0.504, 0.005_666_7).expect("a fixed point");
+        assert_relative_eq!(t(127.5), 175.061, max_relative = 1e-5);
+        assert_relative_eq!(t(24.0), 53.916, max_relative = 1e-5);
+    }
+
+    #[test]
+    fn no_fixed_point_is_runaway() {
+        assert_eq!(linear_c(55.0, 60.0, 0.5, 4.0, 0.0055), None);
+        assert_eq!(linear_c(55.0, 10.0, 45.0, 0.0, 0.005), None, "beyond the highest temperature");
+    }
+
+    fn leaky(leakage_at_25_a: f64) -> DiodeBank {
+        let growth_per_k = std::f64::consts::LN_2 / 10.0;
+        DiodeBank {
+            forward: vec![],
+            slope_v_per_k: -0.001,
+            leakage: vec![LeakageSpan {
+                up_to_c: f64::INFINITY,
+                log_at_zero: leakage_at_25_a.ln() - growth_per_k * 25.0,
+                growth_per_k,
+            }],
+            charge_at_input_c: [0.0; 3],
+            charge_at_swing_c: [0.0; 3],
+            recovery_c: 0.0,
+            thermal_k_per_w: 40.0,
+            junction_limit_c: 150.0,
+            current_rating_a: 1.0,
+            count: 1,
+        }
+    }
+
+    // Reference case T06, solved by scan and Brent's method (scipy): root 90.6877861, next root 142.392854.
+    #[test]
+    fn the_lowest_of_two_roots_is_found() {
+        let diode = leaky(2e-5);
+        let heat =
+            DiodeHeat { diode: &diode, forward25_w: 2.0 * 0.35 + 2.3 * 2.3 * 0.03, mean_a: 2.0, reverse_v: 30.0 * 0.7 };
+        let t = heat.fixed_point_c(60.0).expect("a fixed point");
+        assert_relative_eq!(t, 90.687_786_1, max_relative = 1e-8);
+    }
+
+    #[test]
+    fn enough_leakage_runs_away() {
+        let diode = leaky(2e-3);
+        let heat = DiodeHeat { diode: &diode, forward25_w: 0.7, mean_a: 2.0, reverse_v: 21.0 };
+        assert_eq!(heat.fixed_point_c(60.0), None);
+    }
+}
