@@ -1,1 +1,0 @@
-//! Decimal text, prefix and unit to the nearest `f64`.
