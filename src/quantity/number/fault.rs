@@ -2,8 +2,8 @@
 
 use std::ops::Range;
 
-use crate::quantity::Dimension;
 use crate::quantity::dimension::UnitFault;
+use crate::quantity::{Dimension, shortened};
 
 /// Why a text is not the number that was wanted, and which bytes of it are to blame.
 #[derive(Debug, Clone, PartialEq, Eq, thiserror::Error)]
@@ -103,6 +103,11 @@ impl NumberFault {
             _ => None,
         }
     }
+}
+
+/// The part of a user's text that a message repeats.
+pub(super) fn quoted(text: &str) -> String {
+    shortened(text, 60)
 }
 
 fn with_unit(text: &str, dimension: Dimension) -> String {

@@ -10,6 +10,7 @@ mod decimal;
 mod fault;
 mod scan;
 
+use fault::quoted;
 pub use fault::{Cause, NumberFault};
 
 use decimal::{Decimal, exact_scale, plain};
@@ -53,7 +54,7 @@ pub fn parse(text: &str, dimension: Dimension, bare: Option<Unit>, mark: Mark) -
     if let Some(decimal) = code::read(written, dimension) {
         return finite(&decimal, written, dimension, whole);
     }
-    let foreign_code = || fault(Cause::Code(written.to_owned()), whole.clone());
+    let foreign_code = || fault(Cause::Code(quoted(written)), whole.clone());
     let (mut decimal, length) = scan(written, mark).map_err(|(cause, span)| match code::looks_like_one(written) {
         true => foreign_code(),
         false => fault(cause, start + span.start..start + span.end),
@@ -62,7 +63,7 @@ pub fn parse(text: &str, dimension: Dimension, bare: Option<Unit>, mark: Mark) -
     let unit_text = rest.trim_start();
     let unit_at = whole.end - unit_text.len();
     let unit = if unit_text.is_empty() {
-        bare.ok_or_else(|| fault(Cause::UnitMissing(written.to_owned()), whole.clone()))?
+        bare.ok_or_else(|| fault(Cause::UnitMissing(quoted(written)), whole.clone()))?
     } else {
         Unit::parse(unit_text, dimension).map_err(|refused| match code::looks_like_one(written) {
             true => foreign_code(),
@@ -77,9 +78,9 @@ pub fn parse(text: &str, dimension: Dimension, bare: Option<Unit>, mark: Mark) -
 fn finite(decimal: &Decimal, written: &str, dimension: Dimension, span: Range<usize>) -> Result<f64, NumberFault> {
     let value = decimal.value();
     let cause = if !value.is_finite() {
-        Cause::TooGreat(written.to_owned())
+        Cause::TooGreat(quoted(written))
     } else if value == 0.0 && !decimal.is_zero() {
-        Cause::TooSmall(written.to_owned())
+        Cause::TooSmall(quoted(written))
     } else {
         return Ok(value + 0.0);
     };
@@ -92,18 +93,18 @@ fn unit_cause(written: &str, unit: &str, refused: UnitFault) -> Cause {
     if let (Some(letter), None) = (letters.next(), letters.next())
         && PREFIXES.iter().any(|(prefix, _)| *prefix == letter)
     {
-        return Cause::PrefixAlone(unit.to_owned());
+        return Cause::PrefixAlone(quoted(unit));
     }
     let is_unit = |word: &str| Dimension::ALL.into_iter().any(|other| Unit::parse(word, other).is_ok());
     if unit.split_whitespace().count() > 1 && unit.split_whitespace().all(is_unit) {
-        return Cause::TwoUnits(unit.to_owned());
+        return Cause::TwoUnits(quoted(unit));
     }
     let begins_like_a_unit =
         unit.starts_with(|first: char| first.is_alphabetic() || "°%\u{ba}\u{2103}".contains(first));
     if begins_like_a_unit && !unit.contains(|inside: char| inside.is_ascii_digit() && inside != '2') {
         return Cause::Unit(refused);
     }
-    Cause::NotANumber(written.to_owned())
+    Cause::NotANumber(quoted(written))
 }
 
 #[cfg(test)]

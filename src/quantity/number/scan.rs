@@ -4,7 +4,7 @@ use std::ops::Range;
 
 use super::Mark;
 use super::decimal::Decimal;
-use super::fault::Cause;
+use super::fault::{Cause, quoted};
 
 /// Exponents beyond this are as good as infinite.
 const GREATEST_EXPONENT: i64 = 1_000_000;
@@ -35,8 +35,8 @@ fn sign(text: &str) -> (bool, usize) {
 fn no_digit(text: &str, body: &str) -> Cause {
     let word = body.trim_matches(|letter: char| !letter.is_alphanumeric() && letter != '∞').to_ascii_lowercase();
     match word.as_str() {
-        "nan" | "inf" | "infinity" | "∞" => Cause::NotFinite(text.to_owned()),
-        _ => Cause::NotANumber(text.to_owned()),
+        "nan" | "inf" | "infinity" | "∞" => Cause::NotFinite(quoted(text)),
+        _ => Cause::NotANumber(quoted(text)),
     }
 }
 
@@ -103,9 +103,9 @@ fn grouped_by_three(digits: &str, is_mark: impl Fn(char) -> bool + Copy, in_fron
 fn separated(written: &str) -> Cause {
     let plain: String = written.chars().filter(char::is_ascii_digit).collect();
     if written.matches('.').count() == 1 {
-        return Cause::NotANumber(written.to_owned());
+        return Cause::NotANumber(quoted(written));
     }
-    Cause::Grouped { text: written.to_owned(), plain }
+    Cause::Grouped { text: quoted(written), plain: quoted(&plain) }
 }
 
 /// Why a comma cannot be read.
@@ -116,10 +116,10 @@ fn comma(written: &str) -> Cause {
         reading.matches('.').count() <= 1 && reading.bytes().all(|byte| byte.is_ascii_digit() || byte == b'.')
     };
     match (sound(&as_decimal), sound(&as_group)) {
-        (true, true) => Cause::Ambiguous { text: written.to_owned(), readings: [as_decimal, as_group] },
-        (true, false) => Cause::Grouped { text: written.to_owned(), plain: as_decimal },
-        (false, true) => Cause::Grouped { text: written.to_owned(), plain: as_group },
-        (false, false) => Cause::NotANumber(written.to_owned()),
+        (true, true) => Cause::Ambiguous { text: quoted(written), readings: [quoted(&as_decimal), quoted(&as_group)] },
+        (true, false) => Cause::Grouped { text: quoted(written), plain: quoted(&as_decimal) },
+        (false, true) => Cause::Grouped { text: quoted(written), plain: quoted(&as_group) },
+        (false, false) => Cause::NotANumber(quoted(written)),
     }
 }
 
