@@ -72,7 +72,7 @@ pub fn row(chance: &mut Chance, index: usize) -> Row {
 
 fn ceramic(chance: &mut Chance) -> Body {
     let (stem, maker) =
-        chance.pick(&[("leafum", "Imaginary Leafum Ceramics"), ("petalo", "Pretend Petalo Dielectrics")]);
+        chance.pick(&[("leafvum", "Imaginary Leafvum Ceramics"), ("blozvum", "Pretend Blozvum Dielectrics")]);
     let case = chance.pick(&CERAMIC);
     let rating_v: f64 = chance.pick(&[6.3, 10.0, 16.0, 25.0, 50.0, 50.0, 100.0]);
     let volume_mm3 = case.1 * case.2 * 0.8;
@@ -128,8 +128,8 @@ fn electrolytic(chance: &mut Chance) -> Body {
     let volume_mm3 = case.1 * case.2;
     let esr_mohm = 75_000.0 / volume_mm3 * (rating_v / 25.0).powf(0.2) * chance.scatter(0.2);
     Body {
-        stem: "rainum",
-        maker: "Make-Believe Rainum Foils",
+        stem: "drizvum",
+        maker: "Make-Believe Drizvum Foils",
         kind: "electrolytic",
         case,
         cost: 0.05 + 0.00016 * volume_mm3,

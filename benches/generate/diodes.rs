@@ -6,8 +6,8 @@ use super::sheet::Row;
 
 const MAKERS: [(&str, &str); 3] = [
     ("budwik", "Imaginary Budwik Junctions"),
-    ("stemlo", "Pretend Stemlo Rectifiers"),
-    ("pomlet", "Imaginary Pomlet Works"),
+    ("stemvum", "Pretend Stemvum Rectifiers"),
+    ("cidvum", "Imaginary Cidvum Works"),
 ];
 
 const RATINGS_V: [f64; 5] = [40.0, 60.0, 30.0, 100.0, 20.0];

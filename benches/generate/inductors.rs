@@ -5,10 +5,10 @@ use super::preferred::{E12, nearest};
 use super::sheet::Row;
 
 const MAKERS: [(&str, &str); 4] = [
-    ("rootlo", "Fabled Rootlo Magnetics"),
-    ("barkum", "Pretend Barkum Windings"),
+    ("rootvum", "Fabled Rootvum Magnetics"),
+    ("barkvum", "Pretend Barkvum Windings"),
     ("knurlip", "Imaginary Knurlip Chokes"),
-    ("mosswim", "Make-Believe Mosswim"),
+    ("mossvum", "Make-Believe Mossvum"),
 ];
 
 /// A size: edge and heights, mm.

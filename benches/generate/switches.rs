@@ -5,8 +5,8 @@ use super::packages::{Package, around};
 use super::sheet::Row;
 
 const MAKERS: [(&str, &str); 4] = [
-    ("pomlet", "Imaginary Pomlet Works"),
-    ("twigmo", "Pretend Twigmo Devices"),
+    ("cidvum", "Imaginary Cidvum Works"),
+    ("twigzum", "Pretend Twigzum Devices"),
     ("mulchum", "Fabled Mulchum Silicon"),
     ("sapwim", "Make-Believe Sapwim"),
 ];
