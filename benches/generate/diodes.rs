@@ -21,9 +21,9 @@ const DROP_A: [(&str, f64); 4] = [
 
 #[rustfmt::skip]
 const PACKAGES: [Package; 3] = [
-    Package { name: "D26", area_mm2: 9.2, height_mm: 1.0, die_mm2: 1.6, lead_mohm: 3.0, rise_k_per_w: 64.0, cost: 0.04 },
-    Package { name: "D46", area_mm2: 26.0, height_mm: 1.1, die_mm2: 4.5, lead_mohm: 1.5, rise_k_per_w: 46.0, cost: 0.08 },
-    Package { name: "D66", area_mm2: 62.0, height_mm: 2.2, die_mm2: 12.0, lead_mohm: 0.8, rise_k_per_w: 31.0, cost: 0.17 },
+    Package { name: "D26", area_mm2: 9.2, height_mm: 1.0, die_mm2: 1.6, lead_mohm: 3.0, k_per_w: 64.0, cost: 0.04 },
+    Package { name: "D46", area_mm2: 26.0, height_mm: 1.1, die_mm2: 4.5, lead_mohm: 1.5, k_per_w: 46.0, cost: 0.08 },
+    Package { name: "D66", area_mm2: 62.0, height_mm: 2.2, die_mm2: 12.0, lead_mohm: 0.8, k_per_w: 31.0, cost: 0.17 },
 ];
 
 /// How many diodes are silicon.
@@ -69,7 +69,7 @@ pub fn row(chance: &mut Chance, index: usize) -> Row {
     row.number("current_rating [A]", rating_a);
     add_junction(&mut row, chance, &junction, rating_a, package);
     row.maybe(chance.knows(), "junction_limit [°C]", chance.pick(&[125.0, 150.0, 150.0, 175.0]));
-    row.number("thermal_resistance [K/W]", package.rise_k_per_w * chance.scatter(0.04));
+    row.number("thermal_resistance [K/W]", package.k_per_w * chance.scatter(0.04));
     row
 }
 

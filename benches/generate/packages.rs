@@ -13,7 +13,7 @@ pub struct Package {
     /// Resistance of leads and bonds, mΩ.
     pub lead_mohm: f64,
     /// Junction to ambient on the board, K/W.
-    pub rise_k_per_w: f64,
+    pub k_per_w: f64,
     /// Price without a die.
     pub cost: f64,
 }

@@ -38,14 +38,18 @@ const TECHNOLOGIES: [Technology; 4] = [
 
 #[rustfmt::skip]
 const PACKAGES: [Package; 4] = [
-    Package { name: "Q20", area_mm2: 4.4, height_mm: 0.6, die_mm2: 1.2, lead_mohm: 0.8, rise_k_per_w: 66.0, cost: 0.05 },
-    Package { name: "Q33", area_mm2: 11.6, height_mm: 0.9, die_mm2: 4.0, lead_mohm: 0.5, rise_k_per_w: 48.0, cost: 0.09 },
-    Package { name: "Q56", area_mm2: 31.7, height_mm: 1.1, die_mm2: 11.0, lead_mohm: 0.35, rise_k_per_w: 36.0, cost: 0.16 },
-    Package { name: "Q89", area_mm2: 74.0, height_mm: 2.3, die_mm2: 30.0, lead_mohm: 0.25, rise_k_per_w: 27.0, cost: 0.38 },
+    Package { name: "Q20", area_mm2: 4.4, height_mm: 0.6, die_mm2: 1.2, lead_mohm: 0.8, k_per_w: 66.0, cost: 0.05 },
+    Package { name: "Q33", area_mm2: 11.6, height_mm: 0.9, die_mm2: 4.0, lead_mohm: 0.5, k_per_w: 48.0, cost: 0.09 },
+    Package { name: "Q56", area_mm2: 31.7, height_mm: 1.1, die_mm2: 11.0, lead_mohm: 0.35, k_per_w: 36.0, cost: 0.16 },
+    Package { name: "Q89", area_mm2: 74.0, height_mm: 2.3, die_mm2: 30.0, lead_mohm: 0.25, k_per_w: 27.0, cost: 0.38 },
 ];
 
 /// How many transistors come one package larger than their die needs: room for heat, at a price.
 const ROOMY: f64 = 0.3;
+
+/// Heat at the rated current × thermal resistance on the board, K: ratings hold with the case kept cold, hence several
+/// times what the board can carry away.
+const RATED_RISE_K: f64 = 600.0;
 
 /// The transistor of the given index.
 pub fn row(chance: &mut Chance, index: usize) -> Row {
@@ -73,11 +77,11 @@ pub fn row(chance: &mut Chance, index: usize) -> Row {
     add_charge(&mut row, chance, merit / die_mohm, technology.miller, stress);
     row.maybe(chance.knows(), "body_diode_drop [V]", 0.72 + chance.between(0.0, 0.16));
     row.maybe(chance.knows(), "hot_resistance_ratio @ 125 °C", chance.between(1.38, 1.55) + 0.05 * stress);
-    let lead_limit_a = 12.0 / package.lead_mohm.powi(2);
-    row.maybe(chance.knows(), "current_rating [A]", lead_limit_a.min(160.0 / (die_mohm + package.lead_mohm).sqrt()));
+    let rated_w = RATED_RISE_K / package.k_per_w;
+    row.maybe(chance.knows(), "current_rating [A]", (rated_w / (die_mohm + package.lead_mohm) * 1e3).sqrt());
     row.maybe(chance.knows(), "gate_rating [V]", technology.gate_rating_v);
     row.maybe(chance.knows(), "junction_limit [°C]", chance.pick(&[150.0, 150.0, 175.0]));
-    row.number("thermal_resistance [K/W]", package.rise_k_per_w * chance.scatter(0.04) / die_mm2.powf(0.05));
+    row.number("thermal_resistance [K/W]", package.k_per_w * chance.scatter(0.04) / die_mm2.powf(0.05));
     row
 }
 
