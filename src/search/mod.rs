@@ -3,12 +3,17 @@
 //! [`field`] fits every part to the rail once, [`trial`] judges one core and its banks, [`order`] says which of two stages comes
 //! first, [`leaders`] keeps the best. [`exhaustive`] tries every stage.
 
+pub mod board;
+pub mod bound;
+pub mod completion;
 pub mod exhaustive;
 pub mod field;
 pub mod leaders;
 pub mod order;
+pub mod pruned;
 pub mod request;
 pub mod trial;
+pub mod unit;
 
 pub use field::{Dropped, Field};
 pub use order::Ranked;

@@ -10,7 +10,7 @@ use crate::footing::Footing;
 use crate::limit::core::PointSolution;
 use crate::limit::total::{self, Totals};
 use crate::limit::{self, Check, LimitName};
-use crate::model::{Core, RectifierBank};
+use crate::model::{Core, Outcome, RectifierBank, Variant, solve};
 use crate::part::{Bank, Choke, DiodeBank, Slot, SwitchBank};
 use crate::stage::{Choice, RectifierKind, Stage};
 
@@ -62,7 +62,8 @@ impl<'a> Rectifier<'a> {
         }
     }
 
-    const fn footing(self) -> Footing {
+    /// Cost, area, height.
+    pub const fn footing(self) -> Footing {
         match self {
             Self::Switch(candidate) => candidate.footing,
             Self::Diode(candidate) => candidate.footing,
@@ -87,6 +88,39 @@ pub struct Trio<'a> {
     pub rectifier: Rectifier<'a>,
     /// Inductor.
     pub choke: &'a Candidate<Choke>,
+}
+
+impl<'a> Trio<'a> {
+    fn core(&self, field: &'a Field, at: &AtFrequency) -> Core<'a> {
+        Core {
+            conditions: &field.conditions,
+            frequency_hz: at.frequency_hz,
+            high: &self.high.bank,
+            rectifier: self.rectifier.bank(),
+            choke: &self.choke.bank,
+        }
+    }
+
+    /// Cost, area and height.
+    pub fn footing(&self) -> Footing {
+        self.high.footing.with(self.rectifier.footing()).with(self.choke.footing)
+    }
+
+    /// The weighted sums alone, without any limit; `None` where a weighted point has no numbers.
+    pub fn weigh(&self, field: &'a Field, at: &AtFrequency) -> Option<Weighted> {
+        let core = self.core(field, at);
+        let mut weighted = Weighted::default();
+        let switch_rectifier = self.rectifier.kind() == RectifierKind::Switch;
+        for (load, point) in field.conditions.loads.iter().enumerate() {
+            if point.share > 0.0 {
+                match solve(&core, field.conditions.typical, load, Variant::TYPICAL) {
+                    Outcome::Running(operation) => weighted.add(&field.conditions, load, &operation, switch_rectifier),
+                    _ => return None,
+                }
+            }
+        }
+        Some(weighted)
+    }
 }
 
 /// A core that keeps every limit it has without its banks, with the solutions that the banks are judged by.
@@ -132,13 +166,7 @@ impl<'a> CoreTrial<'a> {
     ) -> Result<Self, Vec<PointSolution>> {
         solutions.clear();
         let conditions = &field.conditions;
-        let core = Core {
-            conditions,
-            frequency_hz: at.frequency_hz,
-            high: &trio.high.bank,
-            rectifier: trio.rectifier.bank(),
-            choke: &trio.choke.bank,
-        };
+        let core = trio.core(field, at);
         let mut own = Gatekeeper { tolerated, excess: 0.0 };
         if own_limits(field, &trio, &mut own).is_break() {
             return Err(solutions);
@@ -163,8 +191,7 @@ impl<'a> CoreTrial<'a> {
                 weighted.add(conditions, load, &solution.typical, switch_rectifier);
             }
         }
-        let footing = trio.high.footing.with(trio.rectifier.footing()).with(trio.choke.footing);
-        Ok(Self { field, trio, core, own, weighted, footing, solutions })
+        Ok(Self { field, trio, core, own, weighted, footing: trio.footing(), solutions })
     }
 
     /// Gives the memory of the solutions back.

@@ -1,0 +1,456 @@
+//! A set of stages that are bounded and searched together: one frequency, one kind of rectifier, inductors of like ripple.
+
+use super::bound::around::{SHORT_OF_LIMIT, junction_limit_c, winding_limit_c};
+use super::bound::bank::{Stream, input_refused, least_input_a2, least_output_a2, output_refused};
+use super::bound::choke::of_choke;
+use super::bound::reach::SHY;
+use super::bound::spread::UNKNOWN_C;
+use super::bound::{Around, Place, Price, Rates, Reach, Span, Spread, choke, high, rectifier};
+use super::field::{AtFrequency, Candidate, Field};
+use super::trial::Rectifier;
+use crate::limit::LimitName;
+use crate::part::{Bank, Choke, SwitchBank};
+use crate::stage::RectifierKind;
+
+/// One frequency, one kind of rectifier, a few inductors of like inductance.
+#[derive(Debug, Clone)]
+pub struct Unit<'a> {
+    /// Inductors and banks at the frequency.
+    pub at: &'a AtFrequency,
+    /// Kind of rectifier.
+    pub kind: RectifierKind,
+    /// The inductors.
+    pub chokes: Vec<&'a Candidate<Choke>>,
+}
+
+/// A candidate still in play, with the least it adds and the hottest it gets.
+#[derive(Debug, Clone, Copy)]
+pub struct Slot<T> {
+    /// The candidate.
+    pub candidate: T,
+    /// The least it adds to the sums of a stage.
+    pub price: Price,
+    /// The hottest it gets, °C.
+    pub hottest_c: f64,
+}
+
+/// A unit with what is left in play below a threshold, every list ascending in what it adds at `rates`.
+#[derive(Debug, Clone)]
+pub struct Refined<'a> {
+    /// High switches.
+    pub highs: Vec<Slot<&'a Candidate<SwitchBank>>>,
+    /// Rectifiers.
+    pub rectifiers: Vec<Slot<Rectifier<'a>>>,
+    /// Inductors.
+    pub chokes: Vec<Slot<&'a Candidate<Choke>>>,
+    /// Exchange rates with the raises that make the bound greatest.
+    pub rates: Rates,
+    /// Controller bias.
+    pub bias: Price,
+    /// Controller bias, the least input bank and the least output bank.
+    pub floor: Price,
+    /// Least burden of any stage.
+    pub bound: f64,
+    spread: Spread,
+    typical: Vec<Reach>,
+    low: Vec<Reach>,
+    worst: Vec<Reach>,
+}
+
+/// Caps on the sums of a stage; infinite where there is none.
+#[derive(Debug, Clone, Copy, PartialEq)]
+pub struct Caps {
+    /// Greatest weighted loss, W, by the least weighted efficiency.
+    pub loss_w: f64,
+    /// Greatest area, mm².
+    pub area_mm2: f64,
+    /// Greatest cost.
+    pub cost: f64,
+}
+
+impl Caps {
+    /// The caps of a rail, but for a tolerated one.
+    pub fn of(field: &Field, tolerated: Option<LimitName>) -> Self {
+        let limits = &field.rail.limits;
+        let cap = |limit, bound: Option<f64>| {
+            bound.filter(|_| tolerated != Some(limit)).map_or(f64::INFINITY, |bound| bound / SHORT_OF_LIMIT)
+        };
+        let conditions = &field.conditions;
+        let output_w: f64 = conditions.loads.iter().map(|load| load.share * conditions.output_v * load.current_a).sum();
+        Self {
+            loss_w: cap(
+                LimitName::Efficiency,
+                limits.efficiency.map(|least| output_w * (1.0 / (least.get() * SHORT_OF_LIMIT) - 1.0)),
+            ),
+            area_mm2: cap(LimitName::Area, limits.area_mm2.map(|bound| bound.get())),
+            cost: cap(LimitName::Cost, limits.cost.map(|bound| bound.get())),
+        }
+    }
+
+    /// Whether sums of least prices already exceed a cap.
+    pub fn exceeded(&self, sum: &Price) -> bool {
+        sum.area_mm2 > self.area_mm2 || sum.cost > self.cost || sum.loss_w * SHY > self.loss_w
+    }
+}
+
+/// What a refinement is asked for.
+#[derive(Debug, Clone, Copy)]
+pub struct Aim<'a> {
+    /// Everything that can stand in each slot.
+    pub field: &'a Field<'a>,
+    /// A limit that may be broken.
+    pub tolerated: Option<LimitName>,
+    /// Caps.
+    pub caps: Caps,
+    /// Burden above which nothing is wanted.
+    pub threshold: f64,
+    /// How often what is left is bounded anew by what is left.
+    pub passes: usize,
+}
+
+impl<'a> Unit<'a> {
+    /// The units of a field at one frequency: inductors whose inductance at full load is within `RATIO` of each other.
+    pub fn all(field: &Field, at: &'a AtFrequency) -> Vec<Self> {
+        const RATIO: f64 = 1.1;
+        let full_load = field.conditions.full_load;
+        let inductance_h = |candidate: &&Candidate<Choke>| candidate.bank.inductance_h[full_load];
+        let mut chokes: Vec<&Candidate<Choke>> = at.chokes.iter().collect();
+        chokes.sort_by(|a, b| inductance_h(a).total_cmp(&inductance_h(b)));
+        let groups: Vec<Vec<&Candidate<Choke>>> = chokes.chunk_by(|a, b| inductance_h(a) == inductance_h(b)).fold(
+            Vec::new(),
+            |mut groups: Vec<Vec<&Candidate<Choke>>>, chunk| {
+                match groups.last_mut() {
+                    Some(group) if inductance_h(&chunk[0]) <= RATIO * inductance_h(&group[0]) => group.extend(chunk),
+                    _ => groups.push(chunk.to_vec()),
+                }
+                groups
+            },
+        );
+        let kinds = [
+            (RectifierKind::Switch, !field.switch_rectifiers.is_empty()),
+            (RectifierKind::Diode, !field.diode_rectifiers.is_empty()),
+        ];
+        let present = kinds.into_iter().filter(|(_, present)| *present);
+        present
+            .flat_map(|(kind, _)| groups.iter().map(move |chokes| Self { at, kind, chokes: chokes.clone() }))
+            .collect()
+    }
+
+    /// What is left of the unit below the threshold; `None` when nothing is.
+    pub fn refine(&self, aim: &Aim<'a>) -> Option<Refined<'a>> {
+        let field = aim.field;
+        let highs = match self.kind {
+            RectifierKind::Switch => &field.high_beside_switch,
+            RectifierKind::Diode => &field.high_beside_diode,
+        };
+        let rectifiers: Vec<Slot<Rectifier<'a>>> = match self.kind {
+            RectifierKind::Switch => field.switch_rectifiers.iter().map(|c| fresh(Rectifier::Switch(c))).collect(),
+            RectifierKind::Diode => field.diode_rectifiers.iter().map(|c| fresh(Rectifier::Diode(c))).collect(),
+        };
+        let mut refined = Refined {
+            highs: highs.iter().map(fresh).collect(),
+            rectifiers,
+            chokes: self.chokes.iter().map(|&candidate| fresh(candidate)).collect(),
+            rates: aim.worth(),
+            bias: Price::default(),
+            floor: Price::default(),
+            bound: f64::NEG_INFINITY,
+            spread: Spread::empty(0),
+            typical: Vec::new(),
+            low: Vec::new(),
+            worst: Vec::new(),
+        };
+        for pass in 0..aim.passes {
+            if pass > 0 {
+                refined.cool(aim);
+            }
+            refined.reach(aim, self.at.frequency_hz, self.kind);
+            refined.price(aim);
+            refined.weigh(aim, self.at)?;
+            refined.sieve(aim);
+            if refined.highs.is_empty() || refined.rectifiers.is_empty() || refined.chokes.is_empty() {
+                return None;
+            }
+        }
+        let rates = refined.rates;
+        refined.highs.sort_by(|a, b| a.price.at(&rates).total_cmp(&b.price.at(&rates)));
+        refined.rectifiers.sort_by(|a, b| a.price.at(&rates).total_cmp(&b.price.at(&rates)));
+        refined.chokes.sort_by(|a, b| a.price.at(&rates).total_cmp(&b.price.at(&rates)));
+        Some(refined)
+    }
+}
+
+fn fresh<T>(candidate: T) -> Slot<T> {
+    Slot { candidate, price: Price::default(), hottest_c: UNKNOWN_C }
+}
+
+impl Aim<'_> {
+    /// The user's worth, nothing raised.
+    pub fn worth(&self) -> Rates {
+        let worth = &self.field.rail.worth;
+        Rates { loss: worth.loss.get(), area: worth.area.get(), cost: worth.cost.get(), allowance: 0.0 }
+    }
+}
+
+impl<'a> Refined<'a> {
+    fn around<'b>(&'b self, aim: &'b Aim) -> Around<'b> {
+        Around {
+            rail: aim.field.rail,
+            conditions: &aim.field.conditions,
+            tolerated: aim.tolerated,
+            spread: &self.spread,
+            typical: &self.typical,
+            low: &self.low,
+            worst: &self.worst,
+        }
+    }
+
+    /// Spans and points from what is in play.
+    fn reach(&mut self, aim: &Aim, frequency_hz: f64, kind: RectifierKind) {
+        let (rail, conditions) = (aim.field.rail, &aim.field.conditions);
+        let ambient_c = conditions.ambient_c;
+        let loads_a: Vec<f64> = conditions.loads.iter().map(|load| load.current_a).collect();
+        let (mut typical, mut worst) = (Spread::empty(loads_a.len()), Spread::empty(loads_a.len()));
+        let limit_c = |own_c: f64| junction_limit_c(rail, aim.tolerated, own_c).clamp(ambient_c, UNKNOWN_C);
+        for slot in &self.highs {
+            let bank = &slot.candidate.bank;
+            typical.add_high(bank, bank.r25_ohm, ambient_c, slot.hottest_c);
+            worst.add_high(bank, bank.worst_r25_ohm, ambient_c, limit_c(bank.junction_limit_c));
+        }
+        for slot in &self.rectifiers {
+            match slot.candidate {
+                Rectifier::Switch(Candidate { bank, .. }) => {
+                    typical.add_switch(bank, bank.r25_ohm, &loads_a, ambient_c, slot.hottest_c);
+                    worst.add_switch(bank, bank.worst_r25_ohm, &loads_a, ambient_c, limit_c(bank.junction_limit_c));
+                }
+                Rectifier::Diode(Candidate { bank, .. }) => {
+                    typical.add_diode(bank, &loads_a, ambient_c, slot.hottest_c);
+                    worst.add_diode(bank, &loads_a, ambient_c, limit_c(bank.junction_limit_c));
+                }
+            }
+        }
+        let winding_c = winding_limit_c(rail, aim.tolerated).clamp(ambient_c, UNKNOWN_C);
+        for slot in &self.chokes {
+            let choke = &slot.candidate.bank;
+            typical.add_choke(choke, choke.dcr25_ohm, ambient_c, slot.hottest_c);
+            worst.add_choke(choke, choke.worst_dcr25_ohm, ambient_c, winding_c);
+        }
+        let switch_rectifier = kind == RectifierKind::Switch;
+        let places = Place::all(conditions);
+        let reach = |spread: &Spread, place: &Place, low| {
+            Reach::new(spread, conditions, *place, frequency_hz, switch_rectifier, low)
+        };
+        let judged = || places.iter().filter(|place| place.judged);
+        self.typical = places.iter().map(|place| reach(&typical, place, false)).collect();
+        self.low = judged().map(|place| reach(&typical, place, true)).collect();
+        self.worst = judged().map(|place| reach(&worst, place, false)).collect();
+        self.spread = typical;
+    }
+
+    /// The least that each candidate adds; those that cannot pass are gone.
+    fn price(&mut self, aim: &Aim) {
+        let around = Around {
+            rail: aim.field.rail,
+            conditions: &aim.field.conditions,
+            tolerated: aim.tolerated,
+            spread: &self.spread,
+            typical: &self.typical,
+            low: &self.low,
+            worst: &self.worst,
+        };
+        self.highs.retain_mut(|slot| {
+            let least = high::least_loss_w(&slot.candidate.bank, slot.hottest_c, &around);
+            least.map(|loss_w| slot.price = Price::new(loss_w, &slot.candidate.footing)).is_some()
+        });
+        self.rectifiers.retain_mut(|slot| {
+            let least = match slot.candidate {
+                Rectifier::Switch(candidate) => rectifier::least_switch_w(&candidate.bank, slot.hottest_c, &around),
+                Rectifier::Diode(candidate) => rectifier::least_diode_w(&candidate.bank, slot.hottest_c, &around),
+            };
+            least.map(|loss_w| slot.price = Price::new(loss_w, &slot.candidate.footing())).is_some()
+        });
+        self.chokes.retain_mut(|slot| {
+            let least = choke::least_loss_w(&slot.candidate.bank, slot.hottest_c, &around);
+            least.map(|loss_w| slot.price = Price::new(loss_w, &slot.candidate.footing)).is_some()
+        });
+    }
+
+    /// Floors of the banks, the raises, and the bound; `None` when nothing passes.
+    fn weigh(&mut self, aim: &Aim, at: &AtFrequency) -> Option<()> {
+        if self.highs.is_empty() || self.rectifiers.is_empty() || self.chokes.is_empty() {
+            return None;
+        }
+        let conditions = &aim.field.conditions;
+        let inputs = self.inputs(aim, at);
+        let outputs = self.outputs(aim, at, None);
+        let bias_w: f64 = conditions
+            .loads
+            .iter()
+            .map(|load| load.share * conditions.bias_a * conditions.supply_v(conditions.inputs_v[conditions.typical]))
+            .sum();
+        let bias = Price { loss_w: bias_w, ..Price::default() };
+        let lists: [&mut dyn Iterator<Item = Price>; 5] = [
+            &mut self.highs.iter().map(|slot| slot.price),
+            &mut self.rectifiers.iter().map(|slot| slot.price),
+            &mut self.chokes.iter().map(|slot| slot.price),
+            &mut inputs.iter().map(|(_, price)| *price),
+            &mut outputs.iter().map(|(_, price)| *price),
+        ];
+        let lists: Vec<Vec<Price>> = lists.into_iter().map(Iterator::collect).collect();
+        if lists.iter().any(Vec::is_empty) {
+            return None;
+        }
+        self.rates = raised(aim, &bias, &lists)?;
+        let least = |list: &[Price]| {
+            list.iter().min_by(|a, b| a.at(&self.rates).total_cmp(&b.at(&self.rates))).copied().unwrap_or_default()
+        };
+        let (input, output) = (least(&lists[3]), least(&lists[4]));
+        self.bias = bias;
+        self.floor = bias.plus(&input).plus(&output);
+        self.bound = self.floor.at(&self.rates)
+            + lists[..3].iter().map(|list| least(list).at(&self.rates)).sum::<f64>()
+            - self.rates.allowance;
+        (self.bound * SHY <= aim.threshold).then_some(())
+    }
+
+    /// Drops what lies above the threshold with the best of everything else.
+    fn sieve(&mut self, aim: &Aim) {
+        let rates = self.rates;
+        let spare = aim.threshold - self.bound * SHY;
+        if spare.is_infinite() {
+            return;
+        }
+        fn keep<T>(slots: &mut Vec<Slot<T>>, rates: &Rates, spare: f64) {
+            let least = slots.iter().map(|slot| slot.price.at(rates)).fold(f64::INFINITY, f64::min);
+            slots.retain(|slot| (slot.price.at(rates) - least) * SHY <= spare);
+        }
+        keep(&mut self.highs, &rates, spare);
+        keep(&mut self.rectifiers, &rates, spare);
+        keep(&mut self.chokes, &rates, spare);
+    }
+
+    /// How hot what is left can get.
+    fn cool(&mut self, aim: &Aim) {
+        let around = self.around(aim);
+        let highs: Vec<f64> =
+            self.highs.iter().map(|slot| high::hottest_c(&slot.candidate.bank, slot.hottest_c, &around)).collect();
+        let rectifiers: Vec<f64> = self
+            .rectifiers
+            .iter()
+            .map(|slot| match slot.candidate {
+                Rectifier::Switch(c) => rectifier::hottest_switch_c(&c.bank, slot.hottest_c, &around),
+                Rectifier::Diode(c) => rectifier::hottest_diode_c(&c.bank, slot.hottest_c, &around),
+            })
+            .collect();
+        let chokes: Vec<f64> =
+            self.chokes.iter().map(|slot| choke::hottest_c(&slot.candidate.bank, slot.hottest_c, &around)).collect();
+        // Rounding: a fixed point is known to 1e-9 K.
+        let cooler = |now_c: f64, found_c: f64| now_c.min(found_c + 1e-6);
+        self.highs.iter_mut().zip(highs).for_each(|(slot, c)| slot.hottest_c = cooler(slot.hottest_c, c));
+        self.rectifiers.iter_mut().zip(rectifiers).for_each(|(slot, c)| slot.hottest_c = cooler(slot.hottest_c, c));
+        self.chokes.iter_mut().zip(chokes).for_each(|(slot, c)| slot.hottest_c = cooler(slot.hottest_c, c));
+    }
+
+    /// Input banks that can pass somewhere in the unit, with the least they add.
+    pub fn inputs(&self, aim: &Aim, at: &'a AtFrequency) -> Vec<(&'a Candidate<Bank>, Price)> {
+        let around = self.around(aim);
+        let full: Vec<Stream> = around.full().map(|reach| Stream::new(*reach)).collect();
+        let weighted_a2: f64 =
+            around.weighed().map(|reach| reach.place.share * least_input_a2(&Stream::new(*reach))).sum();
+        at.input_banks
+            .iter()
+            .filter(|candidate| !input_refused(&candidate.bank, &full, &around))
+            .map(|candidate| (candidate, Price::new(candidate.bank.esr_ohm * weighted_a2, &candidate.footing)))
+            .collect()
+    }
+
+    /// Output banks that can pass with `choke`, or with any inductor of the unit, with the least they add.
+    pub fn outputs(
+        &self,
+        aim: &Aim,
+        at: &'a AtFrequency,
+        choke: Option<&Slot<&'a Candidate<Choke>>>,
+    ) -> Vec<(&'a Candidate<Bank>, Price)> {
+        let around = self.around(aim);
+        let narrow = |reach: &Reach| {
+            Stream::new(choke.map_or(*reach, |slot| {
+                let bank = &slot.candidate.bank;
+                of_choke(bank, bank.dcr25_ohm, slot.hottest_c, reach, around.conditions.ambient_c)
+            }))
+        };
+        let full: Vec<Stream> = around.full().map(narrow).collect();
+        let low: Vec<Stream> = self.low.iter().map(narrow).collect();
+        let weighted_a2: f64 = around.weighed().map(|reach| reach.place.share * least_output_a2(&narrow(reach))).sum();
+        let greatest_h = |choke: &Choke| choke.inductance_h[aim.field.conditions.full_load] * (1.0 + choke.tolerance);
+        let inductance_h = match choke {
+            Some(slot) => Span::at(greatest_h(&slot.candidate.bank)),
+            None => {
+                self.chokes.iter().fold(Span::EMPTY, |span, slot| span.hull(Span::at(greatest_h(&slot.candidate.bank))))
+            }
+        };
+        at.output_banks
+            .iter()
+            .filter(|candidate| !output_refused(&candidate.bank, &full, &low, inductance_h, &around))
+            .map(|candidate| (candidate, Price::new(candidate.bank.esr_ohm * weighted_a2, &candidate.footing)))
+            .collect()
+    }
+}
+
+/// The exchange rates that make the least sum of all slots greatest: for any stage within the caps, its burden is at least
+/// Σ (price at raised rates) − Σ raise·cap (weak Lagrange duality). `None` when no raise is enough to reach the caps.
+fn raised(aim: &Aim, bias: &Price, lists: &[Vec<Price>]) -> Option<Rates> {
+    let caps = [aim.caps.loss_w, aim.caps.area_mm2, aim.caps.cost];
+    let field: [fn(&Price) -> f64; 3] = [|p| p.loss_w, |p| p.area_mm2, |p| p.cost];
+    for (cap, of) in caps.iter().zip(field) {
+        let least: f64 =
+            of(bias) + lists.iter().map(|list| list.iter().map(of).fold(f64::INFINITY, f64::min)).sum::<f64>();
+        if least * SHY > *cap {
+            return None;
+        }
+    }
+    let worth = aim.worth();
+    if caps.iter().all(|cap| cap.is_infinite()) {
+        return Some(worth);
+    }
+    let rates_at = |raise: [f64; 3]| Rates {
+        loss: worth.loss + raise[0],
+        area: worth.area + raise[1],
+        cost: worth.cost + raise[2],
+        allowance: raise.iter().zip(caps).filter(|(raise, _)| **raise > 0.0).map(|(raise, cap)| raise * cap).sum(),
+    };
+    let bound_at = |raise: [f64; 3]| {
+        let rates = rates_at(raise);
+        let least = |list: &Vec<Price>| list.iter().map(|p| p.at(&rates)).fold(f64::INFINITY, f64::min);
+        bias.at(&rates) + lists.iter().map(least).sum::<f64>() - rates.allowance
+    };
+    let mut raise = [0.0; 3];
+    for _ in 0..2 {
+        for axis in 0..3 {
+            if caps[axis].is_finite() {
+                raise[axis] = best_raise(|x| {
+                    let mut tried = raise;
+                    tried[axis] = x;
+                    bound_at(tried)
+                });
+            }
+        }
+    }
+    Some(rates_at(raise))
+}
+
+/// The raise, 0 or a power of two around 1, with the greatest bound; the bound is concave in the raise, so the climb stops at the first fall.
+fn best_raise(bound_at: impl Fn(f64) -> f64) -> f64 {
+    let (mut best, mut best_bound) = (0.0, bound_at(0.0));
+    let mut x = 1.0 / 4096.0;
+    while x <= 4096.0 {
+        let bound = bound_at(x);
+        if bound < best_bound && best > 0.0 {
+            break;
+        }
+        if bound > best_bound {
+            (best, best_bound) = (x, bound);
+        }
+        x *= 2.0;
+    }
+    best
+}
