@@ -90,7 +90,8 @@ fn finite(decimal: &Decimal, written: &str, dimension: Dimension, span: Range<us
 /// What is wrong with the text after the digits.
 fn unit_cause(written: &str, unit: &str, refused: UnitFault) -> Cause {
     let mut letters = unit.chars();
-    if let (Some(letter), None) = (letters.next(), letters.next())
+    let kelvin = matches!(refused, UnitFault::WrongDimension { wanted: Dimension::Temperature, .. });
+    if let (false, Some(letter), None) = (kelvin, letters.next(), letters.next())
         && PREFIXES.iter().any(|(prefix, _)| *prefix == letter)
     {
         return Cause::PrefixAlone(quoted(unit));
