@@ -1,3 +1,4 @@
 //! One file for each question a user asks; each returns plain data.
 
+pub mod rail;
 pub mod shortlist;
