@@ -162,7 +162,4 @@ fn the_demo_rails_are_good() {
     for (name, text) in demo::RAILS {
         assert!(read(name, text).is_ok(), "{name}");
     }
-    let rail = good(demo::RAIL_TEXT).rail;
-    let step = rail.output.step.expect("a load step");
-    assert!(step.crossover_hz.is_some() && rail.limits.cost.is_some() && rail.loads.len() == 2);
 }
