@@ -1,6 +1,7 @@
 //! The demo is what its README says.
 
-use wattsieve::demo::CATALOGS;
+use wattsieve::demo::{CATALOGS, RAILS};
+use wattsieve::rail::read;
 
 #[path = "../benches/generate/mod.rs"]
 mod generate;
@@ -24,4 +25,14 @@ fn the_readme_gives_the_command_that_makes_them() {
         "--seed {SEED} --switches {switches} --diodes {diodes} --inductors {inductors} --capacitors {capacitors}"
     );
     assert!(include_str!("../catalogs/README.md").contains(&command), "{command}");
+}
+
+#[test]
+fn every_rail_reads_without_a_fault() {
+    for (file, text) in RAILS {
+        match read(file, text) {
+            Ok(reading) => assert!(reading.rail.range.switch_rectifier && reading.rail.range.diode_rectifier, "{file}"),
+            Err(faults) => panic!("{}", faults.render(false)),
+        }
+    }
 }
