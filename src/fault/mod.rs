@@ -4,6 +4,7 @@
 //! [`Fault::in_passage`] for a piece of it, pushes it into [`Faults`] and goes on. All faults of a run are rendered once, at the end.
 
 mod collected;
+mod nearest;
 mod place;
 mod render;
 mod visible;
@@ -11,6 +12,7 @@ mod visible;
 use std::ops::Range;
 
 pub use collected::{FAULTS_SHOWN, Faults};
+pub use nearest::nearest;
 pub use visible::visible;
 
 /// Whether a fault stops the run.
