@@ -6,7 +6,7 @@ use crate::account::{Account, account};
 use crate::limit::LimitName;
 use crate::part::{Parts, Slot};
 use crate::rail::Rail;
-use crate::search::{Distinct, Dropped, Found, Ranked, Request, exhaustive::exhaustive};
+use crate::search::{Distinct, Dropped, Found, Ranked, Request, pruned::pruned, relax::relaxed};
 use crate::stage::NamedStage;
 
 /// How a shortlist is asked for.
@@ -94,15 +94,9 @@ pub struct Shortlist {
 
 /// The k best stages; when nothing passes, how far each limit alone would have to give.
 pub fn shortlist(rail: &Rail, parts: &Parts, options: &Options) -> Shortlist {
-    let request = Request {
-        rail,
-        parts,
-        top: options.top,
-        distinct: options.distinct,
-        threads: options.threads,
-        tolerated: None,
-    };
-    let Found { ranked, crossed, evaluated, proven, dropped } = exhaustive(&request);
+    let request =
+        Request { distinct: options.distinct, threads: options.threads, ..Request::new(rail, parts, options.top) };
+    let Found { ranked, crossed, evaluated, proven, dropped } = pruned(&request);
     let picks: Vec<Pick> =
         ranked.iter().enumerate().filter_map(|(place, ranked)| pick(rail, parts, place + 1, ranked)).collect();
     let nothing_passes = ranked.is_empty().then(|| nearest_misses(&request));
@@ -144,8 +138,7 @@ fn nearest_misses(request: &Request) -> Vec<NearestMiss> {
         .into_iter()
         .filter(|limit| limit.can_give())
         .filter_map(|limit| {
-            let found = exhaustive(&Request { tolerated: Some(limit), top: 1, ..*request });
-            let nearest = found.ranked.first()?;
+            let nearest = relaxed(request, limit)?;
             let account = account(request.rail, request.parts, &nearest.stage);
             let broken = account
                 .limits

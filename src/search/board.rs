@@ -16,7 +16,7 @@ pub struct Board<'a> {
 impl<'a> Board<'a> {
     /// A board around an empty list.
     pub fn new(leaders: Leaders<'a>) -> Self {
-        let threshold_bits = AtomicU64::new(leaders.threshold().1.to_bits());
+        let threshold_bits = AtomicU64::new(leaders.threshold().to_bits());
         Self { leaders: Mutex::new(leaders), threshold_bits }
     }
 
@@ -33,7 +33,7 @@ impl<'a> Board<'a> {
         // A worker that panicked has left the list whole: every change to it is one insertion.
         let mut leaders = self.leaders.lock().unwrap_or_else(std::sync::PoisonError::into_inner);
         leaders.offer(ranked);
-        self.threshold_bits.store(leaders.threshold().1.to_bits(), Ordering::Relaxed);
+        self.threshold_bits.store(leaders.threshold().to_bits(), Ordering::Relaxed);
     }
 
     /// The list, best first.

@@ -90,3 +90,26 @@ pub fn complete(core: &CoreTrial, own: &Price, inputs: &[Offer], outputs: &[Offe
         }
     }
 }
+
+/// The least excess over the tolerated limit that any pair of banks gives a core; `None` when no pair passes.
+pub fn least_excess(core: &CoreTrial, inputs: &[&Candidate<Bank>], outputs: &[&Candidate<Bank>]) -> Option<f64> {
+    let (inputs, outputs) = (least_first(core, inputs, Place::Input), least_first(core, outputs, Place::Output));
+    let mut best: Option<f64> = None;
+    for input in &inputs {
+        for output in &outputs {
+            if best.is_some_and(|best| input.excess().max(output.excess()) >= best) {
+                break;
+            }
+            if let Some(ranked) = core.stage(input, output) {
+                best = Some(best.map_or(ranked.excess, |best| best.min(ranked.excess)));
+            }
+        }
+    }
+    best
+}
+
+fn least_first<'a>(core: &CoreTrial, banks: &[&'a Candidate<Bank>], place: Place) -> Vec<BankTrial<'a>> {
+    let mut trials: Vec<BankTrial> = banks.iter().filter_map(|bank| core.bank(bank, place)).collect();
+    trials.sort_by(|a, b| a.excess().total_cmp(&b.excess()));
+    trials
+}

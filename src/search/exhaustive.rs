@@ -4,6 +4,7 @@ use rayon::iter::{IntoParallelRefIterator, ParallelIterator};
 
 use super::field::{AtFrequency, Candidate, Field};
 use super::leaders::Leaders;
+use super::order::Ranked;
 use super::request::{Found, Request};
 use super::trial::{BankTrial, CoreTrial, Place, Rectifier, Trio};
 use crate::limit::core::PointSolution;
@@ -12,15 +13,19 @@ use crate::part::SwitchBank;
 /// The best stages, by trying all that are left when the parts that break a limit of their own are gone. Banks do not act on
 /// the core, so a core is solved once for all of its banks.
 pub fn exhaustive(request: &Request) -> Found {
-    let field = Field::new(request.rail, request.parts, request.tolerated);
-    let frequencies: Vec<AtFrequency> =
-        request.rail.range.frequencies_hz.iter().map(|f| field.at_frequency(f.get())).collect();
+    let field = Field::new(request);
+    let frequencies = frequencies(request, &field);
     let tasks: Vec<Task> = frequencies.iter().flat_map(|at| tasks(&field, at)).collect();
+    let empty = || Leaders::new(request.parts, request.distinct, request.top);
     let run = || {
-        tasks.par_iter().map(|task| crossed(request, &field, task)).reduce(
-            || (Leaders::new(request.parts, request.distinct, request.top), 0),
-            |(a, m), (b, n)| (a.merge(b), m + n),
-        )
+        tasks
+            .par_iter()
+            .map(|task| {
+                let mut leaders = empty();
+                let evaluated = each_stage(request, &field, task, &mut |ranked| leaders.offer(ranked));
+                (leaders, evaluated)
+            })
+            .reduce(|| (empty(), 0), |(a, m), (b, n)| (a.merge(b), m + n))
     };
     // Without a pool of its own the work runs on the one every program has: the answer is the same.
     let (leaders, evaluated) = match rayon::ThreadPoolBuilder::new().num_threads(request.threads).build() {
@@ -34,6 +39,20 @@ pub fn exhaustive(request: &Request) -> Found {
         proven: true,
         dropped: field.dropped.clone(),
     }
+}
+
+/// Every stage that passes, but for what is tolerated, in no particular order.
+pub fn every_stage(request: &Request, visit: &mut dyn FnMut(Ranked)) {
+    let field = Field::new(request);
+    for at in &frequencies(request, &field) {
+        for task in tasks(&field, at) {
+            each_stage(request, &field, &task, visit);
+        }
+    }
+}
+
+fn frequencies(request: &Request, field: &Field) -> Vec<AtFrequency> {
+    request.rail.range.frequencies_hz.iter().map(|f| field.at_frequency(f.get())).collect()
 }
 
 /// One high switch with all rectifiers of one kind, at one frequency.
@@ -57,8 +76,8 @@ fn tasks<'a>(field: &'a Field, at: &'a AtFrequency) -> Vec<Task<'a>> {
     beside_switch.chain(beside_diode).collect()
 }
 
-fn crossed<'a>(request: &Request<'a>, field: &Field, task: &Task) -> (Leaders<'a>, u64) {
-    let mut leaders = Leaders::new(request.parts, request.distinct, request.top);
+/// Visits the passing stages of a task; how many cores were solved.
+fn each_stage(request: &Request, field: &Field, task: &Task, visit: &mut dyn FnMut(Ranked)) -> u64 {
     let mut evaluated = 0;
     let mut memory: Vec<PointSolution> = Vec::new();
     for &rectifier in &task.rectifiers {
@@ -68,16 +87,16 @@ fn crossed<'a>(request: &Request<'a>, field: &Field, task: &Task) -> (Leaders<'a
             memory = match CoreTrial::new(field, task.at, trio, request.tolerated, memory) {
                 Err(memory) => memory,
                 Ok(core) => {
-                    with_banks(&core, task.at, &mut leaders);
+                    with_banks(&core, task.at, visit);
                     core.into_solutions()
                 }
             };
         }
     }
-    (leaders, evaluated)
+    evaluated
 }
 
-fn with_banks(core: &CoreTrial, at: &AtFrequency, leaders: &mut Leaders) {
+fn with_banks(core: &CoreTrial, at: &AtFrequency, visit: &mut dyn FnMut(Ranked)) {
     let inputs: Vec<BankTrial> = at.input_banks.iter().filter_map(|bank| core.bank(bank, Place::Input)).collect();
     if inputs.is_empty() {
         return;
@@ -86,7 +105,7 @@ fn with_banks(core: &CoreTrial, at: &AtFrequency, leaders: &mut Leaders) {
     for input in &inputs {
         for output in &outputs {
             if let Some(ranked) = core.stage(input, output) {
-                leaders.offer(ranked);
+                visit(ranked);
             }
         }
     }

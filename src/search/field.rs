@@ -2,11 +2,12 @@
 
 use std::ops::ControlFlow;
 
+use super::request::{Request, Tolerance};
 use crate::footing::Footing;
 use crate::limit::{Check, LimitName, own, total};
 use crate::model::Conditions;
 use crate::part::{Bank, Choke, DiodeBank, Identity, Parts, Slot, SwitchBank};
-use crate::rail::{Ban, Rail};
+use crate::rail::{Ban, Rail, Worth};
 use crate::stage::Choice;
 
 /// Parts of one slot dropped before crossing because they break a limit of their own.
@@ -38,6 +39,8 @@ pub struct Field<'a> {
     pub rail: &'a Rail,
     /// The parts.
     pub parts: &'a Parts,
+    /// What the burden is made of.
+    pub worth: Worth,
     /// Points and drive.
     pub conditions: Conditions,
     /// High switches beside a switch rectifier.
@@ -74,8 +77,9 @@ pub struct AtFrequency {
 }
 
 impl<'a> Field<'a> {
-    /// Fits all parts to the rail. A part that breaks a limit of its own is dropped, unless that limit is `tolerated`.
-    pub fn new(rail: &'a Rail, parts: &'a Parts, tolerated: Option<LimitName>) -> Self {
+    /// Fits all parts to the rail. A part that breaks a limit of its own is dropped, unless that is tolerated.
+    pub fn new(request: &Request<'a>) -> Self {
+        let Request { rail, parts, worth, tolerated, .. } = *request;
         let conditions = Conditions::of(rail);
         let around = conditions.surroundings();
         let mut sieve = Sieve { rail, tolerated, dropped: Vec::new() };
@@ -163,6 +167,7 @@ impl<'a> Field<'a> {
         Self {
             rail,
             parts,
+            worth,
             conditions,
             high_beside_switch,
             high_beside_diode,
@@ -216,7 +221,7 @@ pub fn is_allowed(rail: &Rail, slot: Slot, identity: &Identity) -> bool {
 
 struct Sieve<'a> {
     rail: &'a Rail,
-    tolerated: Option<LimitName>,
+    tolerated: Option<Tolerance>,
     dropped: Vec<Dropped>,
 }
 
@@ -243,7 +248,7 @@ impl Sieve<'_> {
                 let footing = Footing::of(identity(part), count);
                 let mut broken = None;
                 let mut keep = |check: Check| {
-                    if check.holds() || self.tolerated == Some(check.limit) {
+                    if check.holds() || self.tolerated.is_some_and(|tolerance| tolerance.admits(&check).is_some()) {
                         return ControlFlow::Continue(());
                     }
                     broken = Some(check.limit);

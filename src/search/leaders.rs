@@ -21,17 +21,17 @@ impl<'a> Leaders<'a> {
         Self { parts, distinct, top, entries: Vec::new() }
     }
 
-    /// Excess and burden beyond which nothing can enter any more; infinite while there is room.
-    pub fn threshold(&self) -> (f64, f64) {
+    /// The burden above which nothing can enter any more; infinite while there is room.
+    pub fn threshold(&self) -> f64 {
         if self.entries.len() < self.top {
-            return (f64::INFINITY, f64::INFINITY);
+            return f64::INFINITY;
         }
-        self.entries.last().map_or((f64::NEG_INFINITY, f64::NEG_INFINITY), |last| (last.excess, last.burden))
+        self.entries.last().map_or(f64::NEG_INFINITY, |last| last.burden)
     }
 
     /// Takes a stage in if it is among the best of its identity.
     pub fn offer(&mut self, ranked: Ranked) {
-        if (ranked.excess, ranked.burden) > self.threshold() {
+        if ranked.burden > self.threshold() {
             return;
         }
         let identity = ranked.identity(self.distinct);

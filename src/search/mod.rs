@@ -11,10 +11,11 @@ pub mod field;
 pub mod leaders;
 pub mod order;
 pub mod pruned;
+pub mod relax;
 pub mod request;
 pub mod trial;
 pub mod unit;
 
 pub use field::{Dropped, Field};
 pub use order::Ranked;
-pub use request::{Distinct, Found, Request};
+pub use request::{Distinct, Found, Request, Tolerance};

@@ -43,12 +43,11 @@ impl Ranked {
     }
 }
 
-/// Excess over a tolerated limit, then burden, then weighted loss, then part names as bytes (high switch, rectifier, inductor, input bank, output bank), the
+/// Burden, then weighted loss, then part names as bytes (high switch, rectifier, inductor, input bank, output bank), the
 /// rectifier's kind where two catalogs share a name, counts in the same order, frequency.
 pub fn compare(parts: &Parts, a: &Ranked, b: &Ranked) -> Ordering {
-    a.excess
-        .total_cmp(&b.excess)
-        .then_with(|| a.burden.total_cmp(&b.burden))
+    a.burden
+        .total_cmp(&b.burden)
         .then_with(|| a.weighted_loss_w.total_cmp(&b.weighted_loss_w))
         .then_with(|| compare_stages(parts, &a.stage, &b.stage))
 }

@@ -28,7 +28,7 @@ const PROBE: usize = 2;
 
 /// The same answer as [`super::exhaustive`], bit for bit.
 pub fn pruned(request: &Request) -> Found {
-    let field = Field::new(request.rail, request.parts, request.tolerated);
+    let field = Field::new(request);
     let frequencies: Vec<AtFrequency> =
         request.rail.range.frequencies_hz.iter().map(|f| field.at_frequency(f.get())).collect();
     let board = Board::new(Leaders::new(request.parts, request.distinct, request.top));
@@ -52,15 +52,21 @@ pub fn pruned(request: &Request) -> Found {
 
 struct Search<'a, 'b> {
     request: &'b Request<'a>,
-    field: &'b Field<'a>,
+    field: &'a Field<'a>,
     board: &'b Board<'a>,
     caps: Caps,
     evaluated: AtomicU64,
 }
 
 impl<'a> Search<'a, '_> {
-    fn aim<'c>(&self, field: &'c Field<'c>, passes: usize) -> Aim<'c> {
-        Aim { field, tolerated: self.request.tolerated, caps: self.caps, threshold: self.board.threshold(), passes }
+    fn aim(&self, passes: usize) -> Aim<'a> {
+        Aim {
+            field: self.field,
+            tolerated: self.request.tolerated,
+            caps: self.caps,
+            threshold: self.board.threshold(),
+            passes,
+        }
     }
 
     fn run(&self, frequencies: &[AtFrequency]) {
@@ -68,7 +74,7 @@ impl<'a> Search<'a, '_> {
         let mut bounded: Vec<(f64, &Unit)> = units
             .par_iter()
             .filter_map(|unit| {
-                let refined = unit.refine(&self.aim(self.field, BOUND_PASSES))?;
+                let refined = unit.refine(&self.aim(BOUND_PASSES))?;
                 self.probe(unit, &refined);
                 Some((refined.bound, unit))
             })
@@ -80,7 +86,7 @@ impl<'a> Search<'a, '_> {
                 if bound * SHY > self.board.threshold() {
                     break;
                 }
-                if let Some(refined) = unit.refine(&self.aim(self.field, SEARCH_PASSES)) {
+                if let Some(refined) = unit.refine(&self.aim(SEARCH_PASSES)) {
                     self.search(unit, &refined);
                 }
             }
@@ -103,8 +109,8 @@ impl<'a> Search<'a, '_> {
             return;
         };
         let (least_high, least_rectifier) = (least_high.price.at(rates), least_rectifier.price.at(rates));
-        let aim = self.aim(self.field, SEARCH_PASSES);
-        let inputs = refined.inputs(&aim, unit.at);
+        let aim = self.aim(SEARCH_PASSES);
+        let inputs = refined.inputs(&aim);
         let inputs = offers(&inputs, rates);
         let mut memory = Vec::new();
         for choke in &refined.chokes {
@@ -113,7 +119,7 @@ impl<'a> Search<'a, '_> {
             if (least + refined.floor.at(rates)) * SHY > self.board.threshold() {
                 break;
             }
-            let outputs = refined.outputs(&aim, unit.at, Some(choke));
+            let outputs = refined.outputs(&aim, Some(choke));
             let outputs = offers(&outputs, rates);
             let Some(floor) = Floor::new(refined, &inputs, &outputs, rates) else { continue };
             if (least + floor.figure) * SHY > self.board.threshold() {

@@ -1,10 +1,13 @@
 //! What is asked of a search, and what comes of it.
 
+use std::ops::ControlFlow;
+
 use super::field::Dropped;
 use super::order::Ranked;
-use crate::limit::LimitName;
+use crate::footing::Footing;
+use crate::limit::{Check, LimitName, total};
 use crate::part::Parts;
-use crate::rail::Rail;
+use crate::rail::{Limits, Rail, Worth};
 
 /// Which stages count as different.
 #[derive(Debug, Clone, Copy, PartialEq, Eq, Default)]
@@ -31,8 +34,56 @@ pub struct Request<'a> {
     pub distinct: Distinct,
     /// Worker threads; 0 for one a processor.
     pub threads: usize,
-    /// A limit that may be broken: stages are then ranked by how little they break it.
-    pub tolerated: Option<LimitName>,
+    /// What the burden is made of: the rail's worth, or another where one sum alone is to be made least.
+    pub worth: Worth,
+    /// A limit that may be broken, and by how much.
+    pub tolerated: Option<Tolerance>,
+}
+
+impl<'a> Request<'a> {
+    /// The best stages by the rail's own worth, one a triple, on all processors.
+    pub const fn new(rail: &'a Rail, parts: &'a Parts, top: usize) -> Self {
+        Self { rail, parts, top, distinct: Distinct::Triple, threads: 0, worth: rail.worth, tolerated: None }
+    }
+}
+
+/// Leave to break one limit.
+#[derive(Debug, Clone, Copy, PartialEq)]
+pub struct Tolerance {
+    /// The limit.
+    pub limit: LimitName,
+    /// By how much at the most, relative to its bound; infinite for any amount.
+    pub excess: f64,
+}
+
+impl Tolerance {
+    /// Leave to break a limit by any amount.
+    pub const fn any(limit: LimitName) -> Self {
+        Self { limit, excess: f64::INFINITY }
+    }
+
+    /// Whether a part keeps its own limits, and its footing those of a whole stage, but for what is tolerated.
+    pub fn lets_pass(
+        &self,
+        footing: &Footing,
+        limits: &Limits,
+        own: impl FnOnce(&mut dyn FnMut(Check) -> ControlFlow<()>) -> ControlFlow<()>,
+    ) -> bool {
+        let mut keep = |check: Check| {
+            if check.holds() || self.admits(&check).is_some() {
+                ControlFlow::Continue(())
+            } else {
+                ControlFlow::Break(())
+            }
+        };
+        own(&mut keep).is_continue() && total::footing(footing, limits, &mut keep).is_continue()
+    }
+
+    /// By how much a broken check exceeds its bound, if that is within this tolerance.
+    pub fn admits(&self, check: &Check) -> Option<f64> {
+        let excess = -check.margin()?;
+        (check.limit == self.limit && excess <= self.excess).then_some(excess)
+    }
 }
 
 /// The answer of a search.

@@ -5,11 +5,12 @@ use std::ops::ControlFlow;
 
 use super::field::{AtFrequency, Candidate, Field};
 use super::order::Ranked;
+use super::request::Tolerance;
 use crate::burden::{Weighted, burden};
 use crate::footing::Footing;
 use crate::limit::core::PointSolution;
 use crate::limit::total::{self, Totals};
-use crate::limit::{self, Check, LimitName};
+use crate::limit::{self, Check};
 use crate::model::{Core, Outcome, RectifierBank, Variant, solve};
 use crate::part::{Bank, Choke, DiodeBank, Slot, SwitchBank};
 use crate::stage::{Choice, RectifierKind, Stage};
@@ -17,7 +18,7 @@ use crate::stage::{Choice, RectifierKind, Stage};
 /// Lets through what holds, and the one limit that may be broken.
 #[derive(Debug, Clone, Copy)]
 struct Gatekeeper {
-    tolerated: Option<LimitName>,
+    tolerated: Option<Tolerance>,
     excess: f64,
 }
 
@@ -26,13 +27,13 @@ impl Gatekeeper {
         if check.holds() {
             return ControlFlow::Continue(());
         }
-        if self.tolerated == Some(check.limit)
-            && let Some(margin) = check.margin()
-        {
-            self.excess = self.excess.max(-margin);
-            return ControlFlow::Continue(());
+        match self.tolerated.and_then(|tolerance| tolerance.admits(check)) {
+            Some(excess) => {
+                self.excess = self.excess.max(excess);
+                ControlFlow::Continue(())
+            }
+            None => ControlFlow::Break(()),
         }
-        ControlFlow::Break(())
     }
 }
 
@@ -143,6 +144,13 @@ pub struct BankTrial<'a> {
     keeper: Gatekeeper,
 }
 
+impl BankTrial<'_> {
+    /// By how much it breaks a tolerated limit.
+    pub const fn excess(&self) -> f64 {
+        self.keeper.excess
+    }
+}
+
 /// Which bank of a stage.
 #[derive(Debug, Clone, Copy, PartialEq, Eq)]
 pub enum Place {
@@ -161,7 +169,7 @@ impl<'a> CoreTrial<'a> {
         field: &'a Field<'a>,
         at: &'a AtFrequency,
         trio: Trio<'a>,
-        tolerated: Option<LimitName>,
+        tolerated: Option<Tolerance>,
         mut solutions: Vec<PointSolution>,
     ) -> Result<Self, Vec<PointSolution>> {
         solutions.clear();
@@ -261,7 +269,7 @@ impl<'a> CoreTrial<'a> {
                 output_bank: output.candidate.choice,
             },
             excess: keeper.excess,
-            burden: burden(&self.field.rail.worth, weighted_loss_w, &footing)?,
+            burden: burden(&self.field.worth, weighted_loss_w, &footing)?,
             weighted_loss_w,
         })
     }

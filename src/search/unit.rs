@@ -1,15 +1,18 @@
 //! A set of stages that are bounded and searched together: one frequency, one kind of rectifier, inductors of like ripple.
 
-use super::bound::around::{SHORT_OF_LIMIT, junction_limit_c, winding_limit_c};
+use std::ops::ControlFlow;
+
+use super::bound::around::{SHORT_OF_LIMIT, junction_limit_c, lowered_limit, raised_limit, winding_limit_c};
 use super::bound::bank::{Stream, input_refused, least_input_a2, least_output_a2, output_refused};
 use super::bound::choke::of_choke;
 use super::bound::reach::SHY;
 use super::bound::spread::UNKNOWN_C;
 use super::bound::{Around, Place, Price, Rates, Reach, Span, Spread, choke, high, rectifier};
 use super::field::{AtFrequency, Candidate, Field};
+use super::request::Tolerance;
 use super::trial::Rectifier;
-use crate::limit::LimitName;
-use crate::part::{Bank, Choke, SwitchBank};
+use crate::limit::{LimitName, own};
+use crate::part::{self, Bank, Choke, SwitchBank};
 use crate::stage::RectifierKind;
 
 /// One frequency, one kind of rectifier, a few inductors of like inductance.
@@ -37,6 +40,10 @@ pub struct Slot<T> {
 /// A unit with what is left in play below a threshold, every list ascending in what it adds at `rates`.
 #[derive(Debug, Clone)]
 pub struct Refined<'a> {
+    /// Inductors and banks at the frequency.
+    pub at: &'a AtFrequency,
+    /// Kind of rectifier.
+    pub kind: RectifierKind,
     /// High switches.
     pub highs: Vec<Slot<&'a Candidate<SwitchBank>>>,
     /// Rectifiers.
@@ -69,19 +76,19 @@ pub struct Caps {
 }
 
 impl Caps {
-    /// The caps of a rail, but for a tolerated one.
-    pub fn of(field: &Field, tolerated: Option<LimitName>) -> Self {
+    /// The caps of a rail, with what may be broken of them.
+    pub fn of(field: &Field, tolerated: Option<Tolerance>) -> Self {
         let limits = &field.rail.limits;
         let cap = |limit, bound: Option<f64>| {
-            bound.filter(|_| tolerated != Some(limit)).map_or(f64::INFINITY, |bound| bound / SHORT_OF_LIMIT)
+            bound.map_or(f64::INFINITY, |bound| raised_limit(tolerated, limit, bound) / SHORT_OF_LIMIT)
         };
         let conditions = &field.conditions;
         let output_w: f64 = conditions.loads.iter().map(|load| load.share * conditions.output_v * load.current_a).sum();
         Self {
-            loss_w: cap(
-                LimitName::Efficiency,
-                limits.efficiency.map(|least| output_w * (1.0 / (least.get() * SHORT_OF_LIMIT) - 1.0)),
-            ),
+            loss_w: limits.efficiency.map_or(f64::INFINITY, |least| {
+                let least = lowered_limit(tolerated, LimitName::Efficiency, least.get()) * SHORT_OF_LIMIT;
+                if least > 0.0 { output_w * (1.0 / least - 1.0) } else { f64::INFINITY }
+            }),
             area_mm2: cap(LimitName::Area, limits.area_mm2.map(|bound| bound.get())),
             cost: cap(LimitName::Cost, limits.cost.map(|bound| bound.get())),
         }
@@ -98,8 +105,8 @@ impl Caps {
 pub struct Aim<'a> {
     /// Everything that can stand in each slot.
     pub field: &'a Field<'a>,
-    /// A limit that may be broken.
-    pub tolerated: Option<LimitName>,
+    /// Leave to break a limit.
+    pub tolerated: Option<Tolerance>,
     /// Caps.
     pub caps: Caps,
     /// Burden above which nothing is wanted.
@@ -136,9 +143,8 @@ impl<'a> Unit<'a> {
             .collect()
     }
 
-    /// What is left of the unit below the threshold; `None` when nothing is.
-    pub fn refine(&self, aim: &Aim<'a>) -> Option<Refined<'a>> {
-        let field = aim.field;
+    /// Everything of the unit in play, nothing known of it.
+    pub fn whole(&self, field: &'a Field<'a>) -> Refined<'a> {
         let highs = match self.kind {
             RectifierKind::Switch => &field.high_beside_switch,
             RectifierKind::Diode => &field.high_beside_diode,
@@ -147,11 +153,13 @@ impl<'a> Unit<'a> {
             RectifierKind::Switch => field.switch_rectifiers.iter().map(|c| fresh(Rectifier::Switch(c))).collect(),
             RectifierKind::Diode => field.diode_rectifiers.iter().map(|c| fresh(Rectifier::Diode(c))).collect(),
         };
-        let mut refined = Refined {
+        Refined {
+            at: self.at,
+            kind: self.kind,
             highs: highs.iter().map(fresh).collect(),
             rectifiers,
             chokes: self.chokes.iter().map(|&candidate| fresh(candidate)).collect(),
-            rates: aim.worth(),
+            rates: Rates::worth(&field.worth),
             bias: Price::default(),
             floor: Price::default(),
             bound: f64::NEG_INFINITY,
@@ -159,19 +167,13 @@ impl<'a> Unit<'a> {
             typical: Vec::new(),
             low: Vec::new(),
             worst: Vec::new(),
-        };
-        for pass in 0..aim.passes {
-            if pass > 0 {
-                refined.cool(aim);
-            }
-            refined.reach(aim, self.at.frequency_hz, self.kind);
-            refined.price(aim);
-            refined.weigh(aim, self.at)?;
-            refined.sieve(aim);
-            if refined.highs.is_empty() || refined.rectifiers.is_empty() || refined.chokes.is_empty() {
-                return None;
-            }
         }
+    }
+
+    /// What is left of the unit below the threshold; `None` when nothing is.
+    pub fn refine(&self, aim: &Aim<'a>) -> Option<Refined<'a>> {
+        let mut refined = self.whole(aim.field);
+        refined.tighten(aim)?;
         let rates = refined.rates;
         refined.highs.sort_by(|a, b| a.price.at(&rates).total_cmp(&b.price.at(&rates)));
         refined.rectifiers.sort_by(|a, b| a.price.at(&rates).total_cmp(&b.price.at(&rates)));
@@ -184,15 +186,25 @@ fn fresh<T>(candidate: T) -> Slot<T> {
     Slot { candidate, price: Price::default(), hottest_c: UNKNOWN_C }
 }
 
-impl Aim<'_> {
-    /// The user's worth, nothing raised.
-    pub fn worth(&self) -> Rates {
-        let worth = &self.field.rail.worth;
-        Rates { loss: worth.loss.get(), area: worth.area.get(), cost: worth.cost.get(), allowance: 0.0 }
-    }
-}
-
 impl<'a> Refined<'a> {
+    /// Drops what is proven not to pass or to lie above the threshold; `None` when nothing is left.
+    pub fn tighten(&mut self, aim: &Aim<'a>) -> Option<()> {
+        for pass in 0..aim.passes {
+            if pass > 0 {
+                self.cool(aim);
+            }
+            self.keep_own_limits(aim);
+            self.reach(aim);
+            self.price(aim);
+            self.weigh(aim)?;
+            self.sieve(aim);
+            if self.highs.is_empty() || self.rectifiers.is_empty() || self.chokes.is_empty() {
+                return None;
+            }
+        }
+        Some(())
+    }
+
     fn around<'b>(&'b self, aim: &'b Aim) -> Around<'b> {
         Around {
             rail: aim.field.rail,
@@ -206,7 +218,7 @@ impl<'a> Refined<'a> {
     }
 
     /// Spans and points from what is in play.
-    fn reach(&mut self, aim: &Aim, frequency_hz: f64, kind: RectifierKind) {
+    fn reach(&mut self, aim: &Aim) {
         let (rail, conditions) = (aim.field.rail, &aim.field.conditions);
         let ambient_c = conditions.ambient_c;
         let loads_a: Vec<f64> = conditions.loads.iter().map(|load| load.current_a).collect();
@@ -235,16 +247,52 @@ impl<'a> Refined<'a> {
             typical.add_choke(choke, choke.dcr25_ohm, ambient_c, slot.hottest_c);
             worst.add_choke(choke, choke.worst_dcr25_ohm, ambient_c, winding_c);
         }
-        let switch_rectifier = kind == RectifierKind::Switch;
+        let switch_rectifier = self.kind == RectifierKind::Switch;
         let places = Place::all(conditions);
         let reach = |spread: &Spread, place: &Place, low| {
-            Reach::new(spread, conditions, *place, frequency_hz, switch_rectifier, low)
+            Reach::new(spread, conditions, *place, self.at.frequency_hz, switch_rectifier, low)
         };
         let judged = || places.iter().filter(|place| place.judged);
         self.typical = places.iter().map(|place| reach(&typical, place, false)).collect();
         self.low = judged().map(|place| reach(&typical, place, true)).collect();
         self.worst = judged().map(|place| reach(&worst, place, false)).collect();
         self.spread = typical;
+    }
+
+    /// Drops candidates that break limits of their own by more than is tolerated. Without a tolerance the field holds none.
+    fn keep_own_limits(&mut self, aim: &Aim) {
+        let Some(tolerance) = aim.tolerated else { return };
+        let field = aim.field;
+        let (rail, parts, conditions) = (field.rail, field.parts, &field.conditions);
+        let beside_switch = self.kind == RectifierKind::Switch;
+        self.highs.retain(|slot| {
+            let (choice, bank) = (slot.candidate.choice, &slot.candidate.bank);
+            let part = &parts.switches[choice.index];
+            tolerance.lets_pass(&slot.candidate.footing, &rail.limits, |keep| {
+                own::switch(part, bank, part::Slot::HighSwitch, beside_switch, rail, conditions, keep)
+            })
+        });
+        self.rectifiers.retain(|slot| match slot.candidate {
+            Rectifier::Switch(Candidate { choice, bank, footing }) => {
+                let part = &parts.switches[choice.index];
+                tolerance.lets_pass(footing, &rail.limits, |keep| {
+                    own::switch(part, bank, part::Slot::Rectifier, true, rail, conditions, keep)
+                })
+            }
+            Rectifier::Diode(Candidate { choice, footing, .. }) => {
+                tolerance.lets_pass(footing, &rail.limits, |keep| own::diode(&parts.diodes[choice.index], rail, keep))
+            }
+        });
+        self.chokes
+            .retain(|slot| tolerance.lets_pass(&slot.candidate.footing, &rail.limits, |_| ControlFlow::Continue(())));
+    }
+
+    fn bank_keeps_own_limits(aim: &Aim, candidate: &Candidate<Bank>, slot: part::Slot) -> bool {
+        let rail = aim.field.rail;
+        let capacitor = &aim.field.parts.capacitors[candidate.choice.index];
+        aim.tolerated.is_none_or(|tolerance| {
+            tolerance.lets_pass(&candidate.footing, &rail.limits, |keep| own::capacitor(capacitor, slot, rail, keep))
+        })
     }
 
     /// The least that each candidate adds; those that cannot pass are gone.
@@ -276,13 +324,13 @@ impl<'a> Refined<'a> {
     }
 
     /// Floors of the banks, the raises, and the bound; `None` when nothing passes.
-    fn weigh(&mut self, aim: &Aim, at: &AtFrequency) -> Option<()> {
+    fn weigh(&mut self, aim: &Aim) -> Option<()> {
         if self.highs.is_empty() || self.rectifiers.is_empty() || self.chokes.is_empty() {
             return None;
         }
         let conditions = &aim.field.conditions;
-        let inputs = self.inputs(aim, at);
-        let outputs = self.outputs(aim, at, None);
+        let inputs = self.inputs(aim);
+        let outputs = self.outputs(aim, None);
         let bias_w: f64 = conditions
             .loads
             .iter()
@@ -352,25 +400,22 @@ impl<'a> Refined<'a> {
     }
 
     /// Input banks that can pass somewhere in the unit, with the least they add.
-    pub fn inputs(&self, aim: &Aim, at: &'a AtFrequency) -> Vec<(&'a Candidate<Bank>, Price)> {
+    pub fn inputs(&self, aim: &Aim) -> Vec<(&'a Candidate<Bank>, Price)> {
         let around = self.around(aim);
         let full: Vec<Stream> = around.full().map(|reach| Stream::new(*reach)).collect();
         let weighted_a2: f64 =
             around.weighed().map(|reach| reach.place.share * least_input_a2(&Stream::new(*reach))).sum();
-        at.input_banks
+        self.at
+            .input_banks
             .iter()
+            .filter(|candidate| Self::bank_keeps_own_limits(aim, candidate, part::Slot::InputBank))
             .filter(|candidate| !input_refused(&candidate.bank, &full, &around))
             .map(|candidate| (candidate, Price::new(candidate.bank.esr_ohm * weighted_a2, &candidate.footing)))
             .collect()
     }
 
     /// Output banks that can pass with `choke`, or with any inductor of the unit, with the least they add.
-    pub fn outputs(
-        &self,
-        aim: &Aim,
-        at: &'a AtFrequency,
-        choke: Option<&Slot<&'a Candidate<Choke>>>,
-    ) -> Vec<(&'a Candidate<Bank>, Price)> {
+    pub fn outputs(&self, aim: &Aim, choke: Option<&Slot<&'a Candidate<Choke>>>) -> Vec<(&'a Candidate<Bank>, Price)> {
         let around = self.around(aim);
         let narrow = |reach: &Reach| {
             Stream::new(choke.map_or(*reach, |slot| {
@@ -388,8 +433,10 @@ impl<'a> Refined<'a> {
                 self.chokes.iter().fold(Span::EMPTY, |span, slot| span.hull(Span::at(greatest_h(&slot.candidate.bank))))
             }
         };
-        at.output_banks
+        self.at
+            .output_banks
             .iter()
+            .filter(|candidate| Self::bank_keeps_own_limits(aim, candidate, part::Slot::OutputBank))
             .filter(|candidate| !output_refused(&candidate.bank, &full, &low, inductance_h, &around))
             .map(|candidate| (candidate, Price::new(candidate.bank.esr_ohm * weighted_a2, &candidate.footing)))
             .collect()
@@ -408,7 +455,7 @@ fn raised(aim: &Aim, bias: &Price, lists: &[Vec<Price>]) -> Option<Rates> {
             return None;
         }
     }
-    let worth = aim.worth();
+    let worth = Rates::worth(&aim.field.worth);
     if caps.iter().all(|cap| cap.is_infinite()) {
         return Some(worth);
     }

@@ -1,11 +1,12 @@
 //! What a candidate meets in a unit.
 
 use super::reach::Reach;
-use super::spread::{Spread, UNKNOWN_C};
+use super::spread::Spread;
 use crate::limit::LimitName;
 use crate::model::Conditions;
 use crate::model::high_switch::GateDrive;
 use crate::rail::Rail;
+use crate::search::request::Tolerance;
 
 /// A temperature or current bound is lowered by this before it refuses anything: limits themselves hold within 1e-9.
 pub const SHORT_OF_LIMIT: f64 = 1.0 - 1e-8;
@@ -18,7 +19,7 @@ pub struct Around<'a> {
     /// Points and drive.
     pub conditions: &'a Conditions,
     /// A limit that may be broken, and so refuses nothing.
-    pub tolerated: Option<LimitName>,
+    pub tolerated: Option<Tolerance>,
     /// Spans over the unit with typical parts.
     pub spread: &'a Spread,
     /// The weighted points and full load at every input, with typical parts.
@@ -54,7 +55,17 @@ impl<'a> Around<'a> {
         }
     }
 
-    /// Where a junction must stay, °C; without end when that limit may be broken.
+    /// An upper limit with what may be broken of it.
+    pub fn raised(&self, limit: LimitName, bound: f64) -> f64 {
+        raised_limit(self.tolerated, limit, bound)
+    }
+
+    /// A lower limit with what may be broken of it.
+    pub fn lowered(&self, limit: LimitName, bound: f64) -> f64 {
+        lowered_limit(self.tolerated, limit, bound)
+    }
+
+    /// Where a junction must stay, °C.
     pub fn junction_limit_c(&self, own_limit_c: f64) -> f64 {
         junction_limit_c(self.rail, self.tolerated, own_limit_c)
     }
@@ -66,12 +77,35 @@ impl<'a> Around<'a> {
     }
 }
 
+/// An upper limit with what may be broken of it.
+pub fn raised_limit(tolerated: Option<Tolerance>, limit: LimitName, bound: f64) -> f64 {
+    bound + slack(tolerated, limit, bound)
+}
+
+/// A lower limit with what may be broken of it.
+pub fn lowered_limit(tolerated: Option<Tolerance>, limit: LimitName, bound: f64) -> f64 {
+    bound - slack(tolerated, limit, bound)
+}
+
+fn slack(tolerated: Option<Tolerance>, limit: LimitName, bound: f64) -> f64 {
+    match tolerated {
+        Some(tolerance) if tolerance.limit == limit => {
+            if tolerance.excess.is_finite() {
+                tolerance.excess * bound.abs()
+            } else {
+                f64::INFINITY
+            }
+        }
+        _ => 0.0,
+    }
+}
+
 /// Where a junction with this limit of its own must stay, °C.
-pub fn junction_limit_c(rail: &Rail, tolerated: Option<LimitName>, own_limit_c: f64) -> f64 {
-    if tolerated == Some(LimitName::Junction) { UNKNOWN_C } else { own_limit_c - rail.limits.junction_margin_k.get() }
+pub fn junction_limit_c(rail: &Rail, tolerated: Option<Tolerance>, own_limit_c: f64) -> f64 {
+    raised_limit(tolerated, LimitName::Junction, own_limit_c - rail.limits.junction_margin_k.get())
 }
 
 /// Where a winding must stay, °C.
-pub fn winding_limit_c(rail: &Rail, tolerated: Option<LimitName>) -> f64 {
-    if tolerated == Some(LimitName::Winding) { UNKNOWN_C } else { rail.limits.winding_temperature_c }
+pub fn winding_limit_c(rail: &Rail, tolerated: Option<Tolerance>) -> f64 {
+    raised_limit(tolerated, LimitName::Winding, rail.limits.winding_temperature_c)
 }

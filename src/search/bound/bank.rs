@@ -64,8 +64,8 @@ pub fn input_refused(bank: &Bank, full: &[Stream], around: &Around) -> bool {
     full.iter().any(|stream| {
         over_current(bank, least_input_a2(stream), around)
             || around.rail.input.ripple_v.is_some_and(|bound| {
-                around.tolerated != Some(LimitName::InputRipple)
-                    && least_input_ripple_v(bank, stream) * SHORT_OF_LIMIT > bound.get()
+                let bound_v = around.raised(LimitName::InputRipple, bound.get());
+                least_input_ripple_v(bank, stream) * SHORT_OF_LIMIT > bound_v
             })
     })
 }
@@ -89,8 +89,8 @@ fn least_input_ripple_v(bank: &Bank, stream: &Stream) -> f64 {
 pub fn output_refused(bank: &Bank, full: &[Stream], low: &[Stream], inductance_h: Span, around: &Around) -> bool {
     full.iter().any(|stream| over_current(bank, least_output_a2(stream), around))
         || around.rail.output.ripple_v.is_some_and(|bound| {
-            around.tolerated != Some(LimitName::OutputRipple)
-                && low.iter().any(|stream| least_output_ripple_v(bank, stream) * SHORT_OF_LIMIT > bound.get())
+            let bound_v = around.raised(LimitName::OutputRipple, bound.get());
+            low.iter().any(|stream| least_output_ripple_v(bank, stream) * SHORT_OF_LIMIT > bound_v)
         })
         || full.iter().any(|stream| step_refused(bank, &stream.reach, inductance_h, around))
 }
@@ -117,9 +117,6 @@ fn least_output_ripple_v(bank: &Bank, stream: &Stream) -> f64 {
 /// The deviation grows with the inductance while the capacitance holds the output, and is ESR·ΔI where it does not.
 fn step_refused(bank: &Bank, reach: &Reach, inductance_h: Span, around: &Around) -> bool {
     let Some(jump) = &around.rail.output.step else { return false };
-    if around.tolerated == Some(LimitName::LoadStep) {
-        return false;
-    }
     let deviation_v = step::deviation_v(
         reach.input_v,
         reach.output_v,
@@ -129,12 +126,12 @@ fn step_refused(bank: &Bank, reach: &Reach, inductance_h: Span, around: &Around)
         jump.current_a.get(),
         jump.crossover_hz.map(|hz| hz.get()),
     );
-    deviation_v * SHORT_OF_LIMIT > jump.deviation_v.get()
+    deviation_v * SHORT_OF_LIMIT > around.raised(LimitName::LoadStep, jump.deviation_v.get())
 }
 
 fn over_current(bank: &Bank, least_a2: f64, around: &Around) -> bool {
-    around.tolerated != Some(LimitName::CapacitorCurrent)
-        && bank
-            .ripple_current_a
-            .is_some_and(|rating_a| least_a2.max(0.0).sqrt() / f64::from(bank.count) * SHORT_OF_LIMIT > rating_a)
+    bank.ripple_current_a.is_some_and(|rating_a| {
+        let each_a = least_a2.max(0.0).sqrt() / f64::from(bank.count);
+        each_a * SHORT_OF_LIMIT > around.raised(LimitName::CapacitorCurrent, rating_a)
+    })
 }

@@ -85,9 +85,6 @@ fn least_core_w(core: &CoreLaw, flow: &Flow, continuous: bool) -> f64 {
 
 /// Whether the peak at the low end of the tolerance exceeds the saturation current of any winding temperature.
 fn saturates(choke: &Choke, hottest_c: f64, reach: &Reach, around: &Around) -> bool {
-    if around.tolerated == Some(LimitName::Saturation) {
-        return false;
-    }
     let ambient_c = around.conditions.ambient_c;
     let reach = of_choke(choke, choke.dcr25_ohm, hottest_c, reach, ambient_c);
     let Some(peak_a) = least_peak_a(&reach) else { return true };
@@ -100,7 +97,7 @@ fn saturates(choke: &Choke, hottest_c: f64, reach: &Reach, around: &Around) -> b
         .filter(|point| point.0 > ambient_c)
         .map(|point| point.1)
         .fold(saturation.linear_held(ambient_c), f64::max);
-    needed_a * SHORT_OF_LIMIT > greatest_a
+    needed_a * SHORT_OF_LIMIT > around.raised(LimitName::Saturation, greatest_a)
 }
 
 /// Least peak current at a point, A; `None` when it cannot run.
@@ -115,7 +112,7 @@ pub fn least_peak_a(reach: &Reach) -> Option<f64> {
 }
 
 fn ripple_out_of_window(choke: &Choke, hottest_c: f64, reach: &Reach, around: &Around) -> bool {
-    if reach.place.input != around.conditions.typical || around.tolerated == Some(LimitName::RippleRatio) {
+    if reach.place.input != around.conditions.typical {
         return false;
     }
     let range = &around.rail.range;
@@ -126,8 +123,12 @@ fn ripple_out_of_window(choke: &Choke, hottest_c: f64, reach: &Reach, around: &A
         ripple_a = ripple_a.hull(flow.ripple_a);
     }
     let ratio = |ripple_a: f64| ripple_a / reach.load_a;
-    range.ripple_ratio_max.is_some_and(|bound| ratio(ripple_a.lo) * SHORT_OF_LIMIT > bound.get())
-        || range.ripple_ratio_min.is_some_and(|bound| ratio(ripple_a.hi) < bound.get() * SHORT_OF_LIMIT)
+    range
+        .ripple_ratio_max
+        .is_some_and(|bound| ratio(ripple_a.lo) * SHORT_OF_LIMIT > around.raised(LimitName::RippleRatio, bound.get()))
+        || range.ripple_ratio_min.is_some_and(|bound| {
+            ratio(ripple_a.hi) < around.lowered(LimitName::RippleRatio, bound.get()) * SHORT_OF_LIMIT
+        })
 }
 
 /// No stage of the unit makes this winding hotter at any point with typical parts, °C.

@@ -1,6 +1,7 @@
 //! What a slot adds to the burden, and the exchange rates that turn it into one figure.
 
 use crate::footing::Footing;
+use crate::rail::Worth;
 
 /// A lower bound of what a slot adds to the sums of a stage. Values that nobody asked for count as 0.
 #[derive(Debug, Clone, Copy, PartialEq, Default)]
@@ -24,6 +25,13 @@ pub struct Rates {
     pub cost: f64,
     /// What the raises allow for: Σ raise · cap, to be taken off the sum of all slots.
     pub allowance: f64,
+}
+
+impl Rates {
+    /// The user's worth, nothing raised.
+    pub fn worth(worth: &Worth) -> Self {
+        Self { loss: worth.loss.get(), area: worth.area.get(), cost: worth.cost.get(), allowance: 0.0 }
+    }
 }
 
 impl Price {
