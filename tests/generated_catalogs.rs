@@ -2,6 +2,8 @@
 
 use std::collections::BTreeSet;
 
+use wattsieve::catalog::{ReadOptions, read_texts};
+
 #[path = "../benches/generate/mod.rs"]
 mod generate;
 
@@ -84,6 +86,17 @@ fn every_part_stands_once_with_its_required_figures() {
             assert!(table.numbers(header).iter().all(|value| value.is_some_and(|v| v > 0.0)), "{file}: {header}");
         }
     }
+}
+
+#[test]
+fn the_program_reads_them_without_a_fault() {
+    let catalogs = generate::catalogs(7, COUNTS);
+    let read = read_texts(catalogs.iter().map(|(file, text)| (*file, text.as_bytes())), ReadOptions::default());
+    assert!(read.faults.is_empty(), "{}", read.faults.render(false));
+    assert_eq!(read.parts.switches.len(), COUNTS.switches);
+    assert_eq!(read.parts.diodes.len(), COUNTS.diodes);
+    assert_eq!(read.parts.inductors.len(), COUNTS.inductors);
+    assert_eq!(read.parts.capacitors.len(), COUNTS.capacitors);
 }
 
 #[test]
