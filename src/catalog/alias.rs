@@ -42,6 +42,11 @@ impl Aliases {
                         aliases.add(Some(catalog), key.get_ref(), value.get_ref(), value.span(), &mut place);
                     }
                 }
+                (DeValue::Table(_), None) => {
+                    let names = Catalog::ALL.map(Catalog::name).join(", ");
+                    let found = format!("there is no catalog `{}`", shortened(key.get_ref(), 60));
+                    place.refuse(key.span(), found, format!("one of {names}"), None);
+                }
                 (value_text, _) => aliases.add(None, key.get_ref(), value_text, value.span(), &mut place),
             }
         }
@@ -80,7 +85,7 @@ impl Aliases {
                 place.refuse(
                     span,
                     format!("`{}` is no column", shortened(ours, 60)),
-                    "a column of a catalog".to_owned(),
+                    format!("a column of {}", catalog.map_or("a catalog", Catalog::name)),
                     help,
                 );
             }

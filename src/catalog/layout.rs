@@ -47,6 +47,7 @@ impl HeaderReader<'_> {
     /// The columns that `record` announces.
     pub(super) fn read(mut self, record: &Record<'_>) -> Layout {
         let columns = self.catalog.columns();
+        let before = std::mem::take(self.faults);
         let mut layout = Layout {
             catalog: self.catalog,
             headers: (0..record.cells.len()).map(|place| record.cell(place).into_owned()).collect(),
@@ -75,6 +76,12 @@ impl HeaderReader<'_> {
             };
             places.sort_by(|one, other| condition(one).total_cmp(&condition(other)));
         }
+        if layout.places.iter().all(Vec::is_empty) && !broken.contains(&true) {
+            *self.faults = before;
+            self.no_header(record);
+            layout.sound = false;
+            return layout;
+        }
         for (column, (places, broken)) in columns.iter().zip(layout.places.iter().zip(&broken)) {
             if column.required && places.is_empty() && !broken {
                 self.missing(record, column);
@@ -82,7 +89,22 @@ impl HeaderReader<'_> {
             }
         }
         layout.sound &= !broken.contains(&true);
+        self.faults.append(before);
         layout
+    }
+
+    fn no_header(&mut self, record: &Record<'_>) {
+        let needed = self.catalog.columns().iter().filter(|column| column.required).map(Column::example);
+        let needed: Vec<_> = needed.map(|example| format!("`{example}`")).collect();
+        let fault = Fault::in_passage(
+            self.file,
+            record.line,
+            &record.text,
+            0..record.text.len(),
+            format!("the first row has no header of a catalog of {}", self.catalog.name()),
+            format!("headers such as {}", needed.join(", ")),
+        );
+        self.faults.push(fault.with_help("the header row comes first, its cells parted by `,`, `;` or tab"));
     }
 
     fn field(&mut self, text: &str, place: usize, record: &Record<'_>, broken: &mut [bool]) -> Field {

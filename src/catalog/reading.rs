@@ -161,13 +161,19 @@ impl<R: Read> Reader<'_, R> {
         let mut best = ((0, 0), b',');
         for separator in [b',', b';', b'\t'] {
             self.records.separate_by(separator);
-            if let Ok(Some(record)) = self.records.next() {
+            let next = self.records.next();
+            if let Ok(Some(record)) = &next {
                 let known = |place: &usize| {
                     let text = record.cell(*place);
                     let ours = self.aliases.find(catalog, &text).unwrap_or(&text);
                     !matches!(header::read(ours, catalog, mark_beside(separator)), Err(HeadingFault::Unknown(_)))
                 };
                 let score = ((0..record.cells.len()).filter(known).count(), record.cells.len());
+                if score > best.0 {
+                    best = (score, separator);
+                }
+            } else if next.is_err() {
+                let score = (0, self.records.cells_so_far());
                 if score > best.0 {
                     best = (score, separator);
                 }
@@ -183,8 +189,7 @@ impl<R: Read> Reader<'_, R> {
         self.outcome.row_faults.append(ambiguous);
         self.outcome.doubtful_lines = lines;
         if let Some(fault) = short.first {
-            let others =
-                if short.count > 1 { format!(", as are {} more rows", short.count - 1) } else { String::new() };
+            let others = if short.count > 1 { format!(" (so in {} rows)", short.count) } else { String::new() };
             let found = format!("{}{others}", fault.found);
             self.outcome.row_faults.push(Fault { found, ..fault }.as_warning());
         }
@@ -217,7 +222,7 @@ impl<R: Read> Reader<'_, R> {
 impl Short {
     fn note(&mut self, row: &Row<'_>) {
         let (cells, headers) = (row.record.cells.len(), row.layout.fields.len());
-        if cells >= headers {
+        if cells >= headers || row.record.flaw.is_some() {
             return;
         }
         self.count += 1;

@@ -38,7 +38,7 @@ impl Row<'_> {
                 Field::Known(heading) => self.read_cell(place, heading),
                 Field::Unknown => {}
                 Field::Nameless => {
-                    if !self.record.cell(place).is_empty() {
+                    if self.layout.sound && !self.record.cell(place).is_empty() {
                         let found = format!("the cell `{}` has no header", cut(&self.record.cell(place)));
                         self.refuse(place, found, "an empty cell, or a header above it", None);
                     }
@@ -46,7 +46,7 @@ impl Row<'_> {
             }
         }
         for place in self.layout.fields.len()..self.record.cells.len() {
-            if !self.record.cell(place).is_empty() {
+            if self.layout.sound && !self.record.cell(place).is_empty() {
                 let (cells, headers) = (self.record.cells.len(), self.layout.fields.len());
                 let found = format!("the row has {cells} cells, and the header has {headers}");
                 let help = "is there a separator in a cell? Put quotes around it; write decimal points in numbers";
@@ -62,9 +62,9 @@ impl Row<'_> {
     }
 
     fn read_cell(&mut self, place: usize, heading: Heading) {
-        let Cells::Number { dimension, range, .. } = self.layout.catalog.columns()[heading.column].cells else {
-            return;
-        };
+        let column = &self.layout.catalog.columns()[heading.column];
+        let Cells::Number { dimension, range, .. } = column.cells else { return };
+        let if_unknown = (!column.required).then(|| "leave the cell empty where the value is unknown".to_owned());
         let text = self.record.cell(place);
         if text.is_empty() {
             return;
@@ -76,15 +76,13 @@ impl Row<'_> {
                     self.note_mark(place);
                 }
             }
-            Ok(_) => {
+            Ok(value) => {
                 let found = format!("{}: out of range", self.name(place));
-                self.refuse(place, found, range.words(), range_help(range, &text));
+                self.refuse(place, found, range.words(), per_cent(range, value, &text).or(if_unknown));
             }
             Err(fault) => {
                 let help = fault.help().or_else(|| match fault.cause {
-                    Cause::NotANumber(_) | Cause::NotFinite(_) => {
-                        Some("leave the cell empty where the value is unknown".to_owned())
-                    }
+                    Cause::NotANumber(_) | Cause::NotFinite(_) => if_unknown,
                     _ => None,
                 });
                 self.refuse(place, format!("{}: {fault}", self.name(place)), fault.expected(), help);
@@ -223,12 +221,10 @@ impl Row<'_> {
     }
 }
 
-fn range_help(range: Range, text: &str) -> Option<String> {
-    match range {
-        Range::Share if !text.contains('%') => Some(format!("write `{} %` for per cent", cut(text))),
-        Range::Positive | Range::NonNegative => Some("leave the cell empty where the value is unknown".to_owned()),
-        _ => None,
-    }
+/// What to write for a share that may be meant in per cent.
+fn per_cent(range: Range, value: f64, text: &str) -> Option<String> {
+    let meant = range == Range::Share && (2.0..100.0).contains(&value) && !text.contains('%');
+    meant.then(|| format!("write `{} %` for per cent", cut(text)))
 }
 
 fn cut(text: &str) -> String {

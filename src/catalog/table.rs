@@ -134,6 +134,11 @@ impl<R: Read> Records<R> {
         self.separator = separator;
     }
 
+    /// Cells of the record that was read last, up to the place where reading stopped.
+    pub(super) const fn cells_so_far(&self) -> usize {
+        self.cells.len()
+    }
+
     /// Goes back to before the record that was read last.
     pub(super) const fn again(&mut self) {
         (self.at, self.line) = self.before;

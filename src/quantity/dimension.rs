@@ -151,7 +151,7 @@ pub struct Unit {
 #[derive(Debug, Clone, PartialEq, Eq, thiserror::Error)]
 pub enum UnitFault {
     /// It is a unit of another dimension.
-    #[error("`{text}` is a unit of {}, not of {}", .is.name(), .wanted.name())]
+    #[error("`{text}` is a unit of {}, {}", .is.name(), not_of(*.wanted))]
     WrongDimension {
         /// The text.
         text: String,
@@ -161,7 +161,7 @@ pub enum UnitFault {
         wanted: Dimension,
     },
     /// It is no unit at all.
-    #[error("`{text}` is not a unit of {}", .wanted.name())]
+    #[error("`{text}` is {}", no_unit_of(*.wanted))]
     Unknown {
         /// The text.
         text: String,
@@ -172,10 +172,27 @@ pub enum UnitFault {
     },
 }
 
+fn not_of(wanted: Dimension) -> String {
+    match wanted {
+        Dimension::Plain => "and the number takes none".to_owned(),
+        other => format!("not of {}", other.name()),
+    }
+}
+
+fn no_unit_of(wanted: Dimension) -> String {
+    match wanted {
+        Dimension::Plain => "out of place behind a number that takes no unit".to_owned(),
+        other => format!("not a unit of {}", other.name()),
+    }
+}
+
 impl UnitFault {
     /// What was expected instead.
     pub fn expected(&self) -> String {
         let (Self::WrongDimension { wanted, .. } | Self::Unknown { wanted, .. }) = self;
+        if wanted.is_dimensionless() {
+            return format!("a number with {}", wanted.usual_units());
+        }
         format!("a unit of {}: {}", wanted.name(), wanted.usual_units())
     }
 

@@ -192,7 +192,7 @@ impl Column {
             None | Some(Dimension::Ratio | Dimension::Plain) => String::new(),
             Some(dimension) => format!(" [{}]", usual_unit(self.name, dimension)),
         };
-        let condition = match self.condition() {
+        let condition = match self.condition().filter(|condition| condition.default.is_none()) {
             Some(Condition { dimension: Dimension::Voltage, .. }) => " @ 10 V",
             Some(Condition { dimension: Dimension::Current, .. }) => " @ 1 A",
             Some(Condition { dimension: Dimension::Frequency, .. }) => " @ 100 kHz",

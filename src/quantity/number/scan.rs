@@ -101,10 +101,11 @@ fn grouped_by_three(digits: &str, is_mark: impl Fn(char) -> bool + Copy, in_fron
 }
 
 fn separated(written: &str) -> Cause {
-    let plain: String = written.chars().filter(char::is_ascii_digit).collect();
-    if written.matches('.').count() == 1 {
+    let is_mark = |letter: char| !letter.is_ascii_digit();
+    if written.matches('.').count() == 1 || !grouped_by_three(written, is_mark, true) {
         return Cause::NotANumber(quoted(written));
     }
+    let plain: String = written.chars().filter(char::is_ascii_digit).collect();
     Cause::Grouped { text: quoted(written), plain: quoted(&plain) }
 }
 

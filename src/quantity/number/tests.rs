@@ -90,8 +90,9 @@ fn what_is_not_a_number_is_refused_for_its_reason() {
     let cases = [
         ("", "there is no number"),
         ("abc", "`abc` is not a number"),
-        ("4.7.1", "`4.7.1` has separators between its digits"),
-        ("4 7", "`4 7` has separators between its digits"),
+        ("4.7.1", "`4.7.1` is not a number"),
+        ("1.234.567", "`1.234.567` has separators between its digits"),
+        ("4 7", "`4 7` is not a number"),
         ("--4", "`--4` is not a number"),
         ("4.7 mΩ mΩ", "`mΩ mΩ` is more than one unit"),
         ("4.7 V", "`V` is a unit of voltage, not of resistance"),
