@@ -20,7 +20,7 @@ use crate::rail::Worth;
 /// Excesses nearer to each other than this are the same: limits hold within 1e-9.
 const SAME: f64 = 1e-9;
 /// Boxes of at most so many cores are tried core by core.
-const FEW: usize = 8;
+const FEW: usize = 64;
 
 /// The best stage among those that break `limit` by the least that anything must, all other limits kept, and by how much;
 /// `None` when no stage passes however far the limit gives.
@@ -28,6 +28,7 @@ pub fn relaxed(request: &Request, limit: LimitName) -> Option<Ranked> {
     let any = Request { tolerated: Some(Tolerance::any(limit)), top: 1, ..*request };
     let first = *pruned(&any).ranked.first()?;
     let excess = match sum_alone(limit) {
+        _ if first.excess == 0.0 => 0.0,
         Some(worth) => pruned(&Request { worth, ..any }).ranked.first()?.excess,
         None => least_excess(&any, limit, first.excess),
     };
@@ -97,7 +98,8 @@ impl<'a> Hunt<'a> {
         if space.tighten(&aim).is_none() {
             return;
         }
-        if space.highs.len() * space.rectifiers.len() * space.chokes.len() <= FEW {
+        let cores = space.highs.len() * space.rectifiers.len() * space.chokes.len();
+        if cores <= FEW || count_within(&space, &caps) <= FEW {
             self.try_all(&space, &aim);
         } else {
             let (low, high) = halves(space);
@@ -113,6 +115,10 @@ impl<'a> Hunt<'a> {
             let outputs: Vec<_> = space.outputs(aim, Some(choke)).into_iter().map(|(candidate, _)| candidate).collect();
             for high in &space.highs {
                 for rectifier in &space.rectifiers {
+                    let sum = space.least_floor.plus(&choke.price).plus(&high.price).plus(&rectifier.price);
+                    if aim.caps.exceeded(&sum) {
+                        continue;
+                    }
                     let trio = Trio { high: high.candidate, rectifier: rectifier.candidate, choke: choke.candidate };
                     let tolerance = self.tolerance();
                     memory = match CoreTrial::new(self.field, space.at, trio, Some(tolerance), memory) {
@@ -128,6 +134,27 @@ impl<'a> Hunt<'a> {
             }
         }
     }
+}
+
+/// How many cores of a box are within the caps, counted to a little over [`FEW`].
+fn count_within(space: &Refined, caps: &Caps) -> usize {
+    let mut count = 0;
+    for choke in &space.chokes {
+        let with_choke = space.least_floor.plus(&choke.price);
+        for high in &space.highs {
+            let with_high = with_choke.plus(&high.price);
+            count += space
+                .rectifiers
+                .iter()
+                .filter(|rectifier| !caps.exceeded(&with_high.plus(&rectifier.price)))
+                .take(FEW + 1)
+                .count();
+            if count > FEW {
+                return count;
+            }
+        }
+    }
+    count
 }
 
 /// Two boxes that make up one: its longest list cut in the middle.

@@ -54,8 +54,10 @@ pub struct Refined<'a> {
     pub rates: Rates,
     /// Controller bias.
     pub bias: Price,
-    /// Controller bias, the least input bank and the least output bank.
+    /// Controller bias, the least input bank and the least output bank at the rates.
     pub floor: Price,
+    /// The same, each sum by itself.
+    pub least_floor: Price,
     /// Least burden of any stage.
     pub bound: f64,
     spread: Spread,
@@ -162,6 +164,7 @@ impl<'a> Unit<'a> {
             rates: Rates::worth(&field.worth),
             bias: Price::default(),
             floor: Price::default(),
+            least_floor: Price::default(),
             bound: f64::NEG_INFINITY,
             spread: Spread::empty(0),
             typical: Vec::new(),
@@ -354,6 +357,11 @@ impl<'a> Refined<'a> {
         };
         let (input, output) = (least(&lists[3]), least(&lists[4]));
         self.bias = bias;
+        let least_sum = |of: fn(&Price) -> f64| {
+            of(&bias) + lists[3..].iter().map(|list| list.iter().map(of).fold(f64::INFINITY, f64::min)).sum::<f64>()
+        };
+        let [loss_w, area_mm2, cost] = SUMS.map(least_sum);
+        self.least_floor = Price { loss_w, area_mm2, cost };
         self.floor = bias.plus(&input).plus(&output);
         self.bound = self.floor.at(&self.rates)
             + lists[..3].iter().map(|list| least(list).at(&self.rates)).sum::<f64>()
@@ -361,20 +369,18 @@ impl<'a> Refined<'a> {
         (self.bound * SHY <= aim.threshold).then_some(())
     }
 
-    /// Drops what lies above the threshold with the best of everything else.
+    /// Drops what lies above the threshold, or beyond a cap, with the least of everything else.
     fn sieve(&mut self, aim: &Aim) {
         let rates = self.rates;
-        let spare = aim.threshold - self.bound * SHY;
-        if spare.is_infinite() {
-            return;
+        keep_within(self, aim.threshold - self.bound * SHY, |price| price.at(&rates));
+        let caps = aim.caps;
+        for (cap, of) in [caps.loss_w, caps.area_mm2, caps.cost].into_iter().zip(SUMS) {
+            let least = of(&self.least_floor)
+                + least_of(&self.highs, of)
+                + least_of(&self.rectifiers, of)
+                + least_of(&self.chokes, of);
+            keep_within(self, cap - least * SHY, of);
         }
-        fn keep<T>(slots: &mut Vec<Slot<T>>, rates: &Rates, spare: f64) {
-            let least = slots.iter().map(|slot| slot.price.at(rates)).fold(f64::INFINITY, f64::min);
-            slots.retain(|slot| (slot.price.at(rates) - least) * SHY <= spare);
-        }
-        keep(&mut self.highs, &rates, spare);
-        keep(&mut self.rectifiers, &rates, spare);
-        keep(&mut self.chokes, &rates, spare);
     }
 
     /// How hot what is left can get.
@@ -443,12 +449,31 @@ impl<'a> Refined<'a> {
     }
 }
 
+/// The sums that can be capped.
+const SUMS: [fn(&Price) -> f64; 3] = [|price| price.loss_w, |price| price.area_mm2, |price| price.cost];
+
+fn least_of<T>(slots: &[Slot<T>], of: impl Fn(&Price) -> f64) -> f64 {
+    slots.iter().map(|slot| of(&slot.price)).fold(f64::INFINITY, f64::min)
+}
+
+/// Keeps in each list what exceeds the least of its list by no more than `spare`.
+fn keep_within(refined: &mut Refined, spare: f64, of: impl Fn(&Price) -> f64) {
+    fn keep<T>(slots: &mut Vec<Slot<T>>, spare: f64, of: impl Fn(&Price) -> f64) {
+        let least = least_of(slots, &of);
+        slots.retain(|slot| (of(&slot.price) - least) * SHY <= spare);
+    }
+    if spare < f64::INFINITY {
+        keep(&mut refined.highs, spare, &of);
+        keep(&mut refined.rectifiers, spare, &of);
+        keep(&mut refined.chokes, spare, &of);
+    }
+}
+
 /// The exchange rates that make the least sum of all slots greatest: for any stage within the caps, its burden is at least
 /// Σ (price at raised rates) − Σ raise·cap (weak Lagrange duality). `None` when no raise is enough to reach the caps.
 fn raised(aim: &Aim, bias: &Price, lists: &[Vec<Price>]) -> Option<Rates> {
     let caps = [aim.caps.loss_w, aim.caps.area_mm2, aim.caps.cost];
-    let field: [fn(&Price) -> f64; 3] = [|p| p.loss_w, |p| p.area_mm2, |p| p.cost];
-    for (cap, of) in caps.iter().zip(field) {
+    for (cap, of) in caps.iter().zip(SUMS) {
         let least: f64 =
             of(bias) + lists.iter().map(|list| list.iter().map(of).fold(f64::INFINITY, f64::min)).sum::<f64>();
         if least * SHY > *cap {
