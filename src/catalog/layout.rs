@@ -29,6 +29,8 @@ pub(super) struct Layout {
     pub fields: Vec<Field>,
     /// For each column of the catalog the columns of the file that hold it, by ascending condition.
     pub places: Vec<Vec<usize>>,
+    /// Columns of the catalog that each part needs.
+    pub required: Vec<usize>,
     /// Whether rows can become parts at all.
     pub sound: bool,
 }
@@ -53,6 +55,7 @@ impl HeaderReader<'_> {
             headers: (0..record.cells.len()).map(|place| record.cell(place).into_owned()).collect(),
             fields: Vec::with_capacity(record.cells.len()),
             places: vec![Vec::new(); columns.len()],
+            required: (0..columns.len()).filter(|column| columns[*column].required).collect(),
             sound: true,
         };
         let mut broken = vec![false; columns.len()];

@@ -15,6 +15,7 @@ mod identity;
 mod inductor;
 mod layout;
 mod marks;
+mod names;
 mod raw;
 mod reading;
 mod row;

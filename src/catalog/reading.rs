@@ -1,6 +1,5 @@
 //! One catalog from its first byte to its last: header, rows, and what only the whole file can tell.
 
-use std::collections::HashMap;
 use std::io::Read;
 
 use super::alias::Aliases;
@@ -10,6 +9,7 @@ use super::header::{self, HeadingFault};
 use super::identity::{EQUIVALENT_TO, PART};
 use super::layout::{HeaderReader, Layout};
 use super::marks::Marks;
+use super::names::Names;
 use super::row::Row;
 use super::table::{Flaw, Record, Records, Stopped, TableFault};
 use crate::fault::{Fault, Faults};
@@ -93,7 +93,7 @@ impl<R: Read> Reader<'_, R> {
         let mut marks = Marks::default();
         let Some((layout, mark)) = self.read_header(P::CATALOG, &mut marks)? else { return Ok(()) };
         self.outcome.headers.clone_from(&layout.headers);
-        let mut names: HashMap<String, usize> = HashMap::new();
+        let mut names = Names::default();
         let (mut values, mut short, mut equivalents) = (Vec::new(), Short::default(), Equivalents::new());
         while let Some(record) = self.records.next()? {
             if record.is_blank() {
@@ -184,7 +184,7 @@ impl<R: Read> Reader<'_, R> {
     }
 
     /// Reports what only the end of the file shows.
-    fn finish(&mut self, marks: Marks, short: Short, equivalents: Equivalents, names: &HashMap<String, usize>) {
+    fn finish(&mut self, marks: Marks, short: Short, equivalents: Equivalents, names: &Names) {
         let (ambiguous, lines) = marks.ambiguous();
         self.outcome.row_faults.append(ambiguous);
         self.outcome.doubtful_lines = lines;
@@ -194,7 +194,7 @@ impl<R: Read> Reader<'_, R> {
             self.outcome.row_faults.push(Fault { found, ..fault }.as_warning());
         }
         for (name, fault) in equivalents {
-            if !names.contains_key(&name) {
+            if !names.contains(&name) {
                 self.outcome.row_faults.push(fault.as_warning());
             }
         }
@@ -235,28 +235,31 @@ impl Short {
 }
 
 /// Refuses a part name that stands in an earlier row, or cannot be written on one line.
-fn check_name(row: &mut Row<'_>, names: &mut HashMap<String, usize>) {
-    let (Some(name), Some(place)) = (row.text(PART), row.place(PART)) else { return };
-    if name.contains(|letter: char| letter.is_control()) {
+fn check_name(row: &mut Row<'_>, names: &mut Names) {
+    let Some(place) = row.place(PART) else { return };
+    let record = row.record;
+    let name = record.cell(place);
+    if name.is_empty() {
+        return;
+    }
+    if name.chars().any(char::is_control) {
         let found = format!("{}: there is a line break or another control character in a part name", row.name(place));
         row.refuse(place, found, "a name on one line", None);
     }
-    let line = row.record.line;
-    if let Some(&earlier) = names.get(&name) {
+    let line = record.line;
+    if let Some(earlier) = names.meet(&name, line) {
         let found = format!("part `{}` stands in line {earlier} and again in line {line}", shortened(&name, 60));
         let help = "take one of them out, or give it a name of its own".to_owned();
         row.refuse(place, found, "a name that no other row has", Some(help));
-    } else {
-        names.insert(name, line);
     }
 }
 
-fn note_equivalent(row: &mut Row<'_>, names: &HashMap<String, usize>, equivalents: &mut Equivalents) {
+fn note_equivalent(row: &mut Row<'_>, names: &Names, equivalents: &mut Equivalents) {
     let (Some(name), Some(place)) = (row.text(EQUIVALENT_TO), row.place(EQUIVALENT_TO)) else { return };
     if row.text(PART).as_ref() == Some(&name) {
         let found = format!("{}: the part is its own equivalent", row.name(place));
         row.refuse(place, found, "another part of the same catalog", None);
-    } else if !names.contains_key(&name) {
+    } else if !names.contains(&name) {
         let found = format!("{}: no part of this catalog is called so", row.name(place));
         equivalents.push((name, row.fault(place, found, "a part of the same catalog")));
     }

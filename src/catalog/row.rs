@@ -54,9 +54,10 @@ impl Row<'_> {
                 break;
             }
         }
-        for (column, places) in self.layout.catalog.columns().iter().zip(&self.layout.places) {
-            if column.required && places.iter().all(|place| self.record.cell(*place).is_empty()) {
-                self.refuse_missing(column, places);
+        for &column in &self.layout.required {
+            let places = &self.layout.places[column];
+            if places.iter().all(|place| self.values[*place].is_nan() && self.record.cell(*place).is_empty()) {
+                self.refuse_missing(&self.layout.catalog.columns()[column], places);
             }
         }
     }
@@ -64,11 +65,11 @@ impl Row<'_> {
     fn read_cell(&mut self, place: usize, heading: Heading) {
         let column = &self.layout.catalog.columns()[heading.column];
         let Cells::Number { dimension, range, .. } = column.cells else { return };
-        let if_unknown = (!column.required).then(|| "leave the cell empty where the value is unknown".to_owned());
         let text = self.record.cell(place);
         if text.is_empty() {
             return;
         }
+        let if_unknown = || (!column.required).then(|| "leave the cell empty where the value is unknown".to_owned());
         match parse(&text, dimension, heading.unit, self.mark) {
             Ok(value) if range.holds(value) => {
                 self.values[place] = value;
@@ -78,13 +79,11 @@ impl Row<'_> {
             }
             Ok(value) => {
                 let found = format!("{}: out of range", self.name(place));
-                self.refuse(place, found, range.words(), per_cent(range, value, &text).or(if_unknown));
+                self.refuse(place, found, range.words(), per_cent(range, value, &text).or_else(if_unknown));
             }
             Err(fault) => {
-                let help = fault.help().or_else(|| match fault.cause {
-                    Cause::NotANumber(_) | Cause::NotFinite(_) => if_unknown,
-                    _ => None,
-                });
+                let may_stand_for_unknown = matches!(fault.cause, Cause::NotANumber(_) | Cause::NotFinite(_));
+                let help = fault.help().or_else(|| if_unknown().filter(|_| may_stand_for_unknown));
                 self.refuse(place, format!("{}: {fault}", self.name(place)), fault.expected(), help);
             }
         }

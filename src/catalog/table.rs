@@ -78,11 +78,20 @@ pub(super) struct Record<'a> {
     pub flaw: Option<Flaw>,
 }
 
+/// `text` without blanks around it; nearly every cell has none.
+fn trimmed(text: &str) -> &str {
+    match text.as_bytes() {
+        [] => text,
+        [first, .., last] | [first @ last] if first.is_ascii_graphic() && last.is_ascii_graphic() => text,
+        _ => text.trim(),
+    }
+}
+
 impl Record<'_> {
     /// The text of a cell without blanks around it, quotes undone; empty behind the last cell.
     pub(super) fn cell(&self, place: usize) -> Cow<'_, str> {
         let Some(cell) = self.cells.get(place) else { return Cow::Borrowed("") };
-        let text = self.text.get(cell.start..cell.end).unwrap_or_default().trim();
+        let text = trimmed(self.text.get(cell.start..cell.end).unwrap_or_default());
         if cell.doubled_quotes { Cow::Owned(text.replace("\"\"", "\"")) } else { Cow::Borrowed(text) }
     }
 
