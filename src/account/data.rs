@@ -59,7 +59,7 @@ impl From<Conduction> for Mode {
 }
 
 /// The numbers of a point at which the stage runs.
-#[derive(Debug, Clone, Copy, PartialEq)]
+#[derive(Debug, Clone, Copy, Default, PartialEq)]
 pub struct Reading {
     /// On-time of the high switch / period.
     pub duty: f64,

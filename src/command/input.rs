@@ -1,0 +1,115 @@
+//! What a command reads: the rail and the catalogs, from files or the built-in demo.
+
+use std::io::Read;
+use std::path::{Path, PathBuf};
+
+use super::args::Common;
+use super::failure::Failure;
+use crate::catalog::{self, ReadOptions};
+use crate::demo;
+use crate::fault::{Faults, Severity};
+use crate::rail::{self, Reading};
+
+/// A rail as read.
+#[derive(Debug)]
+pub(super) struct RailInput {
+    /// Its file as the user named it.
+    pub name: String,
+    /// Its text.
+    pub text: String,
+    /// What it says.
+    pub reading: Reading,
+}
+
+/// A file of this name is standard input or output.
+pub(super) fn is_stream(path: &Path) -> bool {
+    path.as_os_str() == "-"
+}
+
+/// The text of a file, or of standard input.
+pub(super) fn text_of(path: &Path) -> Result<String, Failure> {
+    let name = path.display().to_string();
+    let bytes = if is_stream(path) {
+        let mut bytes = Vec::new();
+        std::io::stdin().read_to_end(&mut bytes).map(|_| bytes)
+    } else {
+        std::fs::read(path)
+    }
+    .map_err(|error| Failure::file("cannot read", &name, &error))?;
+    String::from_utf8(bytes).map_err(|_| Failure::Usage(format!("{name} is not UTF-8 text: save it as UTF-8")))
+}
+
+/// Reads the rail file, or the demo's; the faults of a bad one.
+fn read_rail(path: Option<&Path>) -> Result<Result<RailInput, Faults>, Failure> {
+    let (name, text) = match path {
+        Some(path) => (path.display().to_string(), text_of(path)?),
+        None => (demo::RAIL_NAME.to_owned(), demo::RAIL_TEXT.to_owned()),
+    };
+    Ok(rail::read(&name, &text).map(|reading| RailInput { name, text, reading }))
+}
+
+/// The rail alone.
+pub(super) fn rail(path: Option<&Path>) -> Result<RailInput, Failure> {
+    read_rail(path)?.map_err(Failure::Input)
+}
+
+/// The rail and the catalogs, all their faults told together.
+pub(super) fn rail_and_catalogs(
+    path: Option<&Path>,
+    common: &Common,
+    keep_rows: bool,
+) -> Result<(RailInput, catalog::Read), Failure> {
+    let rail = read_rail(path)?;
+    let mut read = catalogs(path, common, keep_rows);
+    match rail {
+        Ok(rail) if !read.faults.has_errors() => {
+            warn(&read, common);
+            Ok((rail, read))
+        }
+        Ok(_) => Err(bad(read)),
+        Err(mut faults) => {
+            faults.append(std::mem::take(&mut read.faults));
+            Err(Failure::Input(faults))
+        }
+    }
+}
+
+fn bad(read: catalog::Read) -> Failure {
+    if read.machine_failed { Failure::MachineFaults(read.faults) } else { Failure::Input(read.faults) }
+}
+
+/// The catalogs of `--catalogs`, else those beside the rail file, else the demo's.
+pub(super) fn catalogs(rail: Option<&Path>, common: &Common, keep_rows: bool) -> catalog::Read {
+    let options = ReadOptions { skip_bad: common.skip_bad, keep_rows };
+    match folder(rail, common) {
+        Some(folder) => catalog::read_folder(&folder, options),
+        None => {
+            let files = demo::CATALOGS.iter().map(|(name, text)| (*name, text.as_bytes()));
+            catalog::read_texts(files, options)
+        }
+    }
+}
+
+fn folder(rail: Option<&Path>, common: &Common) -> Option<PathBuf> {
+    common.catalogs.clone().or_else(|| {
+        let rail = rail?;
+        match rail.parent() {
+            Some(parent) if !is_stream(rail) && !parent.as_os_str().is_empty() => Some(parent.to_path_buf()),
+            _ => Some(PathBuf::from(".")),
+        }
+    })
+}
+
+/// Tells what is doubtful but does not stop the run.
+fn warn(read: &catalog::Read, common: &Common) {
+    if common.quiet {
+        return;
+    }
+    if read.faults.count(Severity::Warning) > 0 {
+        anstream::eprint!("{}", read.faults.render(true));
+    }
+    if read.skipped > 0 {
+        let rows = if read.skipped == 1 { "row" } else { "rows" };
+        anstream::eprintln!("{} bad {rows} left out", read.skipped);
+    }
+}

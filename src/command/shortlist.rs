@@ -1,0 +1,34 @@
+//! `wattsieve shortlist`
+
+use super::args::{DistinctArg, ShortlistArgs};
+use super::failure::Failure;
+use super::saved::{Saved, SavedOptions, SavedRail};
+use super::{Done, input, output};
+use crate::answer::shortlist::{Options, shortlist};
+use crate::show::{self, Format};
+
+pub(super) fn run(command: &ShortlistArgs) -> Result<Done, Failure> {
+    let common = &command.common;
+    let (rail, read) = input::rail_and_catalogs(command.rail.as_deref(), common, command.save.is_some())?;
+    let top = command.top as usize;
+    let options = Options { top, distinct: command.distinct.into(), threads: common.threads };
+    let list = shortlist(&rail.reading.rail, &read.parts, &options);
+    let text = match common.format.into() {
+        Format::Table => show::shortlist::screen(&list),
+        Format::Csv => show::csv::shortlist(&list),
+        Format::Json => show::json::text(&show::json::shortlist(&list)),
+    };
+    if let Some(path) = &command.save {
+        let rail = SavedRail { file: rail.name, text: rail.text };
+        let distinct = match command.distinct {
+            DistinctArg::Triple => "triple",
+            DistinctArg::Stage => "stage",
+            DistinctArg::Switches => "switches",
+        };
+        let options = SavedOptions { top, distinct: distinct.to_owned() };
+        let saved = Saved::new(rail, options, &list, &read.parts, &read.rows);
+        output::write_file(&saved.to_text()?, path)?;
+    }
+    output::write(&text, common.out.as_deref())?;
+    Ok(if list.picks.is_empty() { Done::NothingPasses } else { Done::Well })
+}
