@@ -1,6 +1,6 @@
-//! Reads catalogs of a million rows, and compares with a plain pass of the csv crate over the same bytes.
+//! Reads catalogs of a million rows, and compares with plain passes of the csv crate over the same bytes.
 //!
-//! `cargo bench --bench read_catalog` prints the speed of both, their ratio, and the memory at its peak.
+//! `cargo bench --bench read_catalog` prints the speed of each, their ratios, and the memory at its peak.
 
 use std::error::Error;
 use std::fs::{self, File};
@@ -21,6 +21,7 @@ fn main() -> Result<(), Box<dyn Error>> {
         let path = folder.path().join(name);
         write_catalog(&path, text)?;
         let megabytes = fs::metadata(&path)?.len() as f64 / 1e6;
+        let reused = megabytes / fastest(|| csv_pass_reusing(&path))?;
         let plain = megabytes / fastest(|| csv_pass(&path))?;
         let parts = megabytes
             / fastest(|| match name {
@@ -29,10 +30,10 @@ fn main() -> Result<(), Box<dyn Error>> {
                 "inductors.csv" => parts_pass::<Inductor>(&path),
                 _ => parts_pass::<Capacitor>(&path),
             })?;
-        let (ratio, peak) = (parts / plain, peak_megabytes()?);
-        println!(
-            "{name}: {megabytes:.0} MB; csv crate {plain:.0} MB/s, parts {parts:.0} MB/s, ratio {ratio:.2}; peak {peak:.0} MB"
-        );
+        println!("{name}: {megabytes:.0} MB, {ROWS} rows, peak memory {:.0} MB", peak_megabytes()?);
+        println!("  csv crate, records():     {plain:.0} MB/s; parts at {:.2} of it", parts / plain);
+        println!("  csv crate, one record:    {reused:.0} MB/s; parts at {:.2} of it", parts / reused);
+        println!("  parts:                    {parts:.0} MB/s");
         fs::remove_file(&path)?;
     }
     Ok(())
@@ -63,7 +64,17 @@ fn fastest(run: impl Fn() -> Result<usize, Box<dyn Error>>) -> Result<f64, Box<d
     Ok(best)
 }
 
+/// The pass that the csv crate's guide begins with: a record of its own for each row.
 fn csv_pass(path: &Path) -> Result<usize, Box<dyn Error>> {
+    let mut rows = 0;
+    for record in csv::Reader::from_path(path)?.records() {
+        rows += usize::from(!record?.is_empty());
+    }
+    Ok(rows)
+}
+
+/// The fastest pass that the csv crate makes over text: one record for all rows.
+fn csv_pass_reusing(path: &Path) -> Result<usize, Box<dyn Error>> {
     let mut reader = csv::Reader::from_path(path)?;
     let mut record = csv::StringRecord::new();
     let mut rows = 0;

@@ -1,12 +1,12 @@
 //! The header row of a catalog: what stands in each of its columns.
 
 use super::alias::Aliases;
-use super::column::{Catalog, Column};
+use super::column::{Catalog, Cells, Column, Range};
 use super::header::{self, Heading, HeadingFault};
 use super::marks::Marks;
 use super::table::Record;
 use crate::fault::{Fault, Faults};
-use crate::quantity::{Mark, shortened};
+use crate::quantity::{Mark, Unit, shortened};
 
 /// What one column of a file is.
 #[derive(Debug, Clone, Copy, PartialEq)]
@@ -27,6 +27,8 @@ pub(super) struct Layout {
     pub headers: Vec<String>,
     /// What stands below each.
     pub fields: Vec<Field>,
+    /// Unit and range of the numbers below each header that has a unit.
+    pub plain: Vec<Option<(Unit, Range)>>,
     /// For each column of the catalog the columns of the file that hold it, by ascending condition.
     pub places: Vec<Vec<usize>>,
     /// Columns of the catalog that each part needs.
@@ -54,6 +56,7 @@ impl HeaderReader<'_> {
             catalog: self.catalog,
             headers: (0..record.cells.len()).map(|place| record.cell(place).into_owned()).collect(),
             fields: Vec::with_capacity(record.cells.len()),
+            plain: Vec::new(),
             places: vec![Vec::new(); columns.len()],
             required: (0..columns.len()).filter(|column| columns[*column].required).collect(),
             sound: true,
@@ -72,6 +75,7 @@ impl HeaderReader<'_> {
             }
             layout.fields.push(field);
         }
+        layout.plain = layout.fields.iter().map(|field| plain(field, columns)).collect();
         for places in &mut layout.places {
             let condition = |place: &usize| match layout.fields[*place] {
                 Field::Known(heading) => heading.condition.unwrap_or_default(),
@@ -181,6 +185,14 @@ impl HeaderReader<'_> {
     ) {
         let fault = Fault::in_passage(self.file, record.line, &record.text, record.span(place), found, expected);
         self.faults.push(severity(fault.with_help_if(help)));
+    }
+}
+
+fn plain(field: &Field, columns: &[Column]) -> Option<(Unit, Range)> {
+    let Field::Known(heading) = field else { return None };
+    match columns[heading.column].cells {
+        Cells::Number { range, .. } => heading.unit.map(|unit| (unit, range)),
+        _ => None,
     }
 }
 

@@ -7,7 +7,7 @@ use super::marks::Marks;
 use super::table::{Flaw, Record};
 use crate::fault::{Fault, Faults};
 use crate::part::Curve;
-use crate::quantity::number::{Cause, parse};
+use crate::quantity::number::{Cause, parse, parse_plain};
 use crate::quantity::{Mark, NonNegative, Positive, Share, shortened};
 
 /// One row while it becomes a part.
@@ -34,6 +34,9 @@ impl Row<'_> {
             return;
         }
         for place in 0..self.layout.fields.len().min(self.record.cells.len()) {
+            if self.read_plain(place) {
+                continue;
+            }
             match self.layout.fields[place] {
                 Field::Known(heading) => self.read_cell(place, heading),
                 Field::Unknown => {}
@@ -60,6 +63,24 @@ impl Row<'_> {
                 self.refuse_missing(&self.layout.catalog.columns()[column], places);
             }
         }
+    }
+
+    /// Reads a cell that is empty, or plain digits in the unit of its header; `false` for any other.
+    fn read_plain(&mut self, place: usize) -> bool {
+        let cell = self.record.cells[place];
+        if cell.start == cell.end {
+            return true;
+        }
+        let Some(Some((unit, range))) = self.layout.plain.get(place) else { return false };
+        let bytes = &self.record.text.as_bytes()[cell.start..cell.end];
+        match parse_plain(bytes, *unit) {
+            Some(value) if range.holds(value) => self.values[place] = value,
+            _ => return false,
+        }
+        if self.mark == Mark::PointOrComma {
+            self.note_mark(place);
+        }
+        true
     }
 
     fn read_cell(&mut self, place: usize, heading: Heading) {

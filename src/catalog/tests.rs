@@ -73,3 +73,33 @@ fn a_folder_that_is_not_there_is_said_to_be_missing() {
     assert!(read.faults.render(false).starts_with("no/such/folder: error: the folder of catalogs cannot be read"));
     assert!(!read.machine_failed);
 }
+
+#[test]
+fn endless_files_are_refused_and_not_read_to_their_end() {
+    for (byte, said) in
+        [(b'x', "longer than a mebibyte"), (b',', "more than 4096 cells"), (b'"', "longer than a mebibyte")]
+    {
+        let outcome = for_each_part::<crate::part::Diode>("endless", std::io::repeat(byte), |_, _| {});
+        let faults = outcome.file_faults.render(false);
+        assert!(faults.contains(said), "{faults}");
+    }
+}
+
+#[cfg(unix)]
+#[test]
+fn a_folder_may_have_a_name_that_is_no_text() {
+    use std::os::unix::ffi::OsStrExt;
+
+    let root = tempfile::tempdir().expect("a folder of our own");
+    let folder = root.path().join(std::ffi::OsStr::from_bytes(b"caf\xe9"));
+    std::fs::create_dir(&folder).expect("a folder in it");
+    for (name, text) in demo::CATALOGS {
+        std::fs::write(folder.join(name), text).expect("a catalog in it");
+    }
+    let read = read_folder(&folder, ReadOptions::default());
+    assert_eq!(read.faults.render(false), "");
+    assert!(!read.parts.switches.is_empty());
+    std::fs::write(folder.join("diodes.csv"), "part\n").expect("a catalog in it");
+    let faults = read_folder(&folder, ReadOptions::default()).faults.render(false);
+    assert!(faults.contains("caf\u{fffd}"), "{faults}");
+}

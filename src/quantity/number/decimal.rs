@@ -25,8 +25,8 @@ pub(super) fn exact_scale(mantissa: u64, exponent: i64) -> Option<f64> {
 }
 
 /// A plain number of at most 18 digits, `[-]digits[.digits]`, as mantissa and power of ten: what nearly every cell is.
-pub(super) fn plain(text: &str) -> Option<(bool, u64, i64)> {
-    let (negative, digits) = match text.as_bytes() {
+pub(super) fn plain(text: &[u8]) -> Option<(bool, u64, i64)> {
+    let (negative, digits) = match text {
         [b'-', rest @ ..] => (true, rest),
         all => (false, all),
     };

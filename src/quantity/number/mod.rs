@@ -39,10 +39,8 @@ pub enum Mark {
 /// When `text` is not one finite number with a unit of `dimension`, or is ambiguous.
 pub fn parse(text: &str, dimension: Dimension, bare: Option<Unit>, mark: Mark) -> Result<f64, NumberFault> {
     let bare = bare.or_else(|| dimension.is_dimensionless().then_some(Unit::base(dimension)));
-    if let (Some(unit), Some((negative, mantissa, exponent))) = (bare, plain(text))
-        && let Some(size) = exact_scale(mantissa, exponent + i64::from(unit.exponent))
-    {
-        return Ok(if negative { 0.0 - size } else { size });
+    if let Some(value) = bare.and_then(|unit| parse_plain(text.as_bytes(), unit)) {
+        return Ok(value);
     }
     let fault = |cause, span| NumberFault { cause, span, dimension };
     let start = text.len() - text.trim_start().len();
@@ -72,6 +70,14 @@ pub fn parse(text: &str, dimension: Dimension, bare: Option<Unit>, mark: Mark) -
     };
     decimal.exponent += i64::from(unit.exponent);
     finite(&decimal, written, dimension, whole)
+}
+
+/// The number in `unit` that `text` writes, in base units, if it is digits with a point or without and easy to convert exactly:
+/// the quick way for most cells of a table. `None` says nothing about `text`.
+pub(crate) fn parse_plain(text: &[u8], unit: Unit) -> Option<f64> {
+    let (negative, mantissa, exponent) = plain(text)?;
+    let size = exact_scale(mantissa, exponent + i64::from(unit.exponent))?;
+    Some(if negative { 0.0 - size } else { size })
 }
 
 /// The value of `decimal` if a double can tell it from zero and infinity.
