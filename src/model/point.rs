@@ -95,14 +95,10 @@ pub enum Outcome {
 
 /// Temperatures that move less than this between two steps have settled, K; the model asks for 1e-9.
 const SETTLED_K: f64 = 1e-10;
-/// Relative movement of the peak current at which it has settled.
-const SETTLED_PEAK: f64 = 1e-14;
 /// Steps of the direct iteration before the damped one takes over.
 const DIRECT_STEPS: u32 = 40;
 /// Steps of the damped iteration: halving a gap of 500 K down to the resolution takes 60.
 const DAMPED_STEPS: u32 = 400;
-/// Steps for the peak current of discontinuous conduction.
-const PEAK_STEPS: u32 = 60;
 /// How far a part without a fixed point at the present currents moves up in a damped step, K.
 const CLIMB_K: f64 = 40.0;
 
@@ -278,23 +274,15 @@ impl<'a> Place<'a> {
             ..self.circuit
         };
         let drop = self.drop_at(heat.rectifier_c, circuit.load_a);
-        let currents = current::continuous(&circuit, drop)?;
+        let currents = current::continuous(&circuit, drop);
         let forced = self.core.conditions.forced && matches!(self.core.rectifier, RectifierBank::Switch(_));
         if forced || circuit.load_a >= currents.ripple_a / 2.0 {
-            return Ok((currents, drop));
+            return Ok((currents.running(circuit.dead_share)?, drop));
         }
-        let mut peak_a = 0.0;
-        let mut settled = (currents, drop);
-        for _ in 0..PEAK_STEPS {
-            let drop = self.drop_at(heat.rectifier_c, peak_a / 2.0);
-            settled = (current::discontinuous(&circuit, drop, peak_a)?, drop);
-            let moved_a = (settled.0.peak_a - peak_a).abs();
-            peak_a = settled.0.peak_a;
-            if moved_a <= SETTLED_PEAK * peak_a {
-                break;
-            }
-        }
-        Ok(settled)
+        let drop_at = |current_a: f64| self.drop_at(heat.rectifier_c, current_a);
+        let peak_a = current::discontinuous_peak_a(&circuit, drop_at)?;
+        let drop = drop_at(peak_a / 2.0);
+        Ok((current::discontinuous(&circuit, drop, peak_a)?, drop))
     }
 
     fn flow(&self, heat: &Heat) -> Result<Flow<'_>, Stop> {

@@ -119,48 +119,49 @@ impl Reach {
         }
     }
 
-    /// Continuous duty at given figures; 1 where the input does not reach the output.
+    /// Continuous duty at given figures, above 1 where the input does not reach the output.
     fn duty_at(&self, high_ohm: f64, winding_ohm: f64, drop_v: f64, body_v: f64) -> f64 {
         let i = self.load_a;
         let below_v = self.input_v - i * high_ohm + drop_v;
         let above_v = self.output_v + i * winding_ohm + (1.0 - self.dead_share) * drop_v + self.dead_share * body_v;
-        if below_v > above_v { above_v / below_v } else { 1.0 }
+        if below_v > 0.0 { above_v / below_v } else { f64::INFINITY }
     }
 
-    /// Duty rises with every resistance and drop while it runs at all.
+    /// Duty rises with every resistance, and with the drop one way or the other all along.
     pub fn duty(&self) -> Span {
+        let lo = |drop_v| self.duty_at(self.high_ohm.lo, self.winding_ohm.lo, drop_v, self.body_v.lo);
+        let hi = |drop_v| self.duty_at(self.high_ohm.hi, self.winding_ohm.hi, drop_v, self.body_v.hi);
         Span {
-            lo: self.duty_at(self.high_ohm.lo, self.winding_ohm.lo, self.drop_v.lo, self.body_v.lo),
-            hi: self
-                .duty_at(self.high_ohm.hi, self.winding_ohm.hi, self.drop_v.hi, self.body_v.hi)
-                .min(1.0 - self.dead_share),
+            lo: lo(self.drop_v.lo).min(lo(self.drop_v.hi)),
+            hi: hi(self.drop_v.lo).max(hi(self.drop_v.hi)).min(1.0 - self.dead_share),
         }
     }
 
-    /// Continuous ripple falls with the high switch's resistance, rises with the drops, and is a concave parabola in the winding's.
+    /// Continuous ripple falls with the high switch's resistance, follows the duty over the drops, and is a concave parabola in
+    /// the winding's resistance.
     fn ripple_a(&self) -> Span {
         let i = self.load_a;
         let volts = |high_ohm: f64, winding_ohm: f64, drop_v: f64, body_v: f64| {
             let on_v = self.input_v - self.output_v - i * (high_ohm + winding_ohm);
-            on_v.max(0.0) * self.duty_at(high_ohm, winding_ohm, drop_v, body_v)
+            if on_v > 0.0 { on_v * self.duty_at(high_ohm, winding_ohm, drop_v, body_v) } else { 0.0 }
         };
-        let least = |winding_ohm| volts(self.high_ohm.hi, winding_ohm, self.drop_v.lo, self.body_v.lo);
-        let greatest = |winding_ohm| volts(self.high_ohm.lo, winding_ohm, self.drop_v.hi, self.body_v.hi);
-        let turn_ohm = (self.input_v
-            - i * self.high_ohm.lo
-            - 2.0 * self.output_v
-            - (1.0 - self.dead_share) * self.drop_v.hi
-            - self.dead_share * self.body_v.hi)
-            / (2.0 * i);
-        let lo_v = least(self.winding_ohm.lo).min(least(self.winding_ohm.hi));
-        let hi_v = if self.winding_ohm.lo > self.winding_ohm.hi {
-            0.0
-        } else {
-            greatest(turn_ohm.clamp(self.winding_ohm.lo, self.winding_ohm.hi))
+        let least = |drop_v: f64| {
+            let at = |winding_ohm| volts(self.high_ohm.hi, winding_ohm, drop_v, self.body_v.lo);
+            at(self.winding_ohm.lo).min(at(self.winding_ohm.hi))
+        };
+        let greatest = |drop_v: f64| {
+            let turn_ohm = (self.input_v
+                - i * self.high_ohm.lo
+                - 2.0 * self.output_v
+                - (1.0 - self.dead_share) * drop_v
+                - self.dead_share * self.body_v.hi)
+                / (2.0 * i);
+            let winding_ohm = turn_ohm.max(self.winding_ohm.lo).min(self.winding_ohm.hi);
+            volts(self.high_ohm.lo, winding_ohm, drop_v, self.body_v.hi)
         };
         Span {
-            lo: lo_v / (self.inductance_h.hi * self.frequency_hz),
-            hi: hi_v / (self.inductance_h.lo * self.frequency_hz),
+            lo: least(self.drop_v.lo).min(least(self.drop_v.hi)) / (self.inductance_h.hi * self.frequency_hz),
+            hi: greatest(self.drop_v.lo).max(greatest(self.drop_v.hi)) / (self.inductance_h.lo * self.frequency_hz),
         }
     }
 
