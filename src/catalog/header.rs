@@ -14,6 +14,8 @@ pub(super) struct Heading {
     pub unit: Option<Unit>,
     /// Test condition in base units, the default one too; `None` for columns without conditions.
     pub condition: Option<f64>,
+    /// Whether the header writes the condition, which then wins over a plain column at the same one.
+    pub explicit: bool,
 }
 
 /// Why a header cell means nothing.
@@ -55,7 +57,7 @@ pub(super) fn read(text: &str, catalog: Catalog, mark: Mark) -> Result<Heading, 
             let found = format!("the header `{}` has a unit or a condition, and `{}` is text", cut(text), column.name);
             return Err(bad(found, format!("`{}`", column.name), None));
         }
-        return Ok(Heading { column: place, unit: None, condition: None });
+        return Ok(Heading { column: place, unit: None, condition: None, explicit: false });
     };
     let unit = match written.unit {
         None | Some("") if dimension.is_dimensionless() => Some(Unit::base(dimension)),
@@ -94,7 +96,7 @@ pub(super) fn read(text: &str, catalog: Catalog, mark: Mark) -> Result<Heading, 
             Some(value)
         }
     };
-    Ok(Heading { column: place, unit, condition: given })
+    Ok(Heading { column: place, unit, condition: given, explicit: written.condition.is_some() })
 }
 
 /// The condition of a header cell as it is written.
@@ -160,7 +162,7 @@ mod tests {
         let column = Catalog::Switches.place(name);
         let dimension = Catalog::Switches.columns()[column].dimension();
         let unit = exponent.zip(dimension).map(|(exponent, dimension)| Unit { dimension, exponent });
-        Heading { column, unit, condition }
+        Heading { column, unit, condition, explicit: false }
     }
 
     #[test]
@@ -177,6 +179,7 @@ mod tests {
             ("area [cm²]", at("area", Some(2), None)),
         ];
         for (text, expected) in cases {
+            let expected = Heading { explicit: text.contains('@'), ..expected };
             assert_eq!(heading(text), Ok(expected), "{text}");
         }
     }

@@ -78,10 +78,13 @@ impl HeaderReader<'_> {
         layout.plain = layout.fields.iter().map(|field| plain(field, columns)).collect();
         for places in &mut layout.places {
             let condition = |place: &usize| match layout.fields[*place] {
-                Field::Known(heading) => heading.condition.unwrap_or_default(),
-                _ => 0.0,
+                Field::Known(heading) => (heading.condition.unwrap_or_default(), !heading.explicit),
+                _ => (0.0, true),
             };
-            places.sort_by(|one, other| condition(one).total_cmp(&condition(other)));
+            places.sort_by(|one, other| {
+                let (one, other) = (condition(one), condition(other));
+                one.0.total_cmp(&other.0).then(one.1.cmp(&other.1))
+            });
         }
         if layout.places.iter().all(Vec::is_empty) && !broken.contains(&true) {
             *self.faults = before;
@@ -196,8 +199,12 @@ fn plain(field: &Field, columns: &[Column]) -> Option<(Unit, Range)> {
     }
 }
 
-/// The column among `places` that gives the same quantity at the same condition.
+/// The column among `places` that gives the same quantity at the same condition, written alike: a plain column may stand beside
+/// one that writes its default condition.
 fn twin(heading: &Heading, fields: &[Field], places: &[usize]) -> Option<usize> {
-    let same = |place: &usize| matches!(fields[*place], Field::Known(other) if other.condition == heading.condition);
+    let same = |place: &usize| {
+        matches!(fields[*place],
+            Field::Known(other) if other.condition == heading.condition && other.explicit == heading.explicit)
+    };
     places.iter().copied().find(same)
 }

@@ -166,14 +166,19 @@ impl Row<'_> {
         self.number(column).and_then(Share::new)
     }
 
-    /// Condition, value and place of every filled column of a quantity, by ascending condition.
+    /// Condition, value and place of every filled column of a quantity, by ascending condition, each condition once: a column that
+    /// writes it wins over a plain one.
     pub(super) fn points(&self, column: usize) -> impl Iterator<Item = (f64, f64, usize)> {
-        self.layout.places[column].iter().filter_map(|&place| match self.layout.fields[place] {
-            Field::Known(heading) if !self.values[place].is_nan() => {
-                Some((heading.condition.unwrap_or_default(), self.values[place], place))
-            }
-            _ => None,
-        })
+        let mut last = None;
+        self.layout.places[column]
+            .iter()
+            .filter_map(|&place| match self.layout.fields[place] {
+                Field::Known(heading) if !self.values[place].is_nan() => {
+                    Some((heading.condition.unwrap_or_default(), self.values[place], place))
+                }
+                _ => None,
+            })
+            .filter(move |point| last.replace(point.0) != Some(point.0))
     }
 
     /// The curve through the points of a quantity.

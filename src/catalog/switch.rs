@@ -63,17 +63,8 @@ fn gate_levels(row: &mut Row<'_>) -> Option<GateLevels> {
 }
 
 /// The hot ratio at its one temperature.
-fn hot_resistance(row: &mut Row<'_>) -> Option<HotRatio> {
+fn hot_resistance(row: &Row<'_>) -> Option<HotRatio> {
     const COLUMN: usize = place("hot_resistance_ratio");
-    let mut points = row.points(COLUMN);
-    let (temperature_c, _, _) = points.next()?;
-    let second = points.next();
-    drop(points);
-    if let Some((_, _, at)) = second {
-        let found = format!("{}: the ratio is given at two temperatures", row.name(at));
-        row.refuse(at, found, "one ratio at one temperature", Some("leave all but one of them empty".to_owned()));
-        return None;
-    }
-    let ratio = row.points(COLUMN).next().map(|(_, ratio, _)| ratio)?;
+    let (temperature_c, ratio, _) = row.points(COLUMN).last()?;
     HotRatio::new(crate::quantity::Positive::new(ratio)?, temperature_c)
 }
