@@ -193,11 +193,12 @@ fn all_checks(rail: &Rail, parts: &Parts, stage: &Stage, core: &Core, fitted: &F
     let _ = own_checks(rail, parts, stage, core, fitted, receive);
     let _ = limit::core::supply(core, rail, receive);
     for (input, load) in each_point(conditions) {
-        if let Some(solution) = limit::core::point(core, rail, input, load, receive) {
+        if let ControlFlow::Continue(solution) = limit::core::point(core, rail, input, load, receive) {
             let _ = limit::bank::input(&fitted.input, core, rail, (input, load), &solution, receive);
             let _ = limit::bank::output(&fitted.output, core, rail, (input, load), &solution, receive);
         }
     }
+    let _ = limit::bank::load_step(&fitted.output, core, rail, receive);
     let _ = limit::total::check(totals, &rail.limits, receive);
     for limit in [limit::LimitName::Dropout, limit::LimitName::Runaway] {
         if checks.iter().all(|check| check.limit != limit) {

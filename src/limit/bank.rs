@@ -18,7 +18,8 @@ pub fn input(
     receive: &mut (impl Receiver + ?Sized),
 ) -> ControlFlow<()> {
     let index = core.conditions.point(input, load);
-    let currents = &solution.typical.currents;
+    let Some(typical) = &solution.typical else { return ControlFlow::Continue(()) };
+    let currents = &typical.currents;
     current(bank, Slot::InputBank, currents.input_bank_a2, index, receive)?;
     match rail.input.ripple_v {
         Some(bound) => {
@@ -29,7 +30,7 @@ pub fn input(
     }
 }
 
-/// Limits of an output bank at a point.
+/// Limits of an output bank at a point, but for the load step.
 pub fn output(
     bank: &Bank,
     core: &Core,
@@ -38,31 +39,39 @@ pub fn output(
     solution: &PointSolution,
     receive: &mut (impl Receiver + ?Sized),
 ) -> ControlFlow<()> {
-    let conditions = core.conditions;
-    let index = conditions.point(input, load);
-    current(bank, Slot::OutputBank, solution.typical.currents.output_bank_a2, index, receive)?;
-    if let Some(bound) = rail.output.ripple_v {
-        let load_a = conditions.loads[load].current_a;
-        let currents = &solution.low_inductance.currents;
-        let ripple_v = ripple::output_v(currents, load_a, core.frequency_hz, bank, bank.least_f(input));
-        receive(Check::upper(LimitName::OutputRipple, Slot::OutputBank, ripple_v, bound.get()).at(index))?;
+    let index = core.conditions.point(input, load);
+    if let Some(typical) = &solution.typical {
+        current(bank, Slot::OutputBank, typical.currents.output_bank_a2, index, receive)?;
     }
-    match &rail.output.step {
-        Some(jump) if load == conditions.full_load => {
-            let deviation_v = step::deviation_v(
-                conditions.inputs_v[input],
-                conditions.output_v,
-                core.choke.inductance_h[load] * (1.0 + core.choke.tolerance),
-                bank.least_f(input),
-                bank.esr_ohm,
-                jump.current_a.get(),
-                jump.crossover_hz.map(|hz| hz.get()),
-            );
-            let bound_v = jump.deviation_v.get();
-            receive(Check::upper(LimitName::LoadStep, Slot::OutputBank, deviation_v, bound_v).at(index))
+    match (&solution.low_inductance, rail.output.ripple_v) {
+        (Some(low), Some(bound)) => {
+            let load_a = core.conditions.loads[load].current_a;
+            let ripple_v = ripple::output_v(&low.currents, load_a, core.frequency_hz, bank, bank.least_f(input));
+            receive(Check::upper(LimitName::OutputRipple, Slot::OutputBank, ripple_v, bound.get()).at(index))
         }
         _ => ControlFlow::Continue(()),
     }
+}
+
+/// The load step at full load, at every input: it depends on inductor and bank alone.
+pub fn load_step(bank: &Bank, core: &Core, rail: &Rail, receive: &mut (impl Receiver + ?Sized)) -> ControlFlow<()> {
+    let Some(jump) = &rail.output.step else { return ControlFlow::Continue(()) };
+    let conditions = core.conditions;
+    let load = conditions.full_load;
+    for (input, &input_v) in conditions.inputs_v.iter().enumerate() {
+        let deviation_v = step::deviation_v(
+            input_v,
+            conditions.output_v,
+            core.choke.inductance_h[load] * (1.0 + core.choke.tolerance),
+            bank.least_f(input),
+            bank.esr_ohm,
+            jump.current_a.get(),
+            jump.crossover_hz.map(|hz| hz.get()),
+        );
+        let check = Check::upper(LimitName::LoadStep, Slot::OutputBank, deviation_v, jump.deviation_v.get());
+        receive(check.at(conditions.point(input, load)))?;
+    }
+    ControlFlow::Continue(())
 }
 
 fn current(

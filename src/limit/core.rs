@@ -10,15 +10,22 @@ use crate::rail::Rail;
 /// How badly diodes in parallel share their current (common practice, no source).
 const DIODE_SHARING: f64 = 1.3;
 
-/// The three solutions that one point asks for.
+/// The solutions that one point asks for; `None` where a variant has no numbers.
 #[derive(Debug, Clone, Copy, PartialEq)]
 pub struct PointSolution {
     /// Typical parts.
-    pub typical: Operation,
-    /// Greatest resistances.
-    pub worst: Operation,
+    pub typical: Option<Operation>,
     /// Inductance at the low end of its tolerance.
-    pub low_inductance: Operation,
+    pub low_inductance: Option<Operation>,
+    /// Greatest resistances.
+    pub worst: Option<Operation>,
+}
+
+impl PointSolution {
+    /// Whether every variant runs.
+    pub const fn is_whole(&self) -> bool {
+        self.typical.is_some() && self.low_inductance.is_some() && self.worst.is_some()
+    }
 }
 
 /// The limit of the core that is not of a point: what the gate supply must give.
@@ -28,44 +35,44 @@ pub fn supply(core: &Core, rail: &Rail, receive: &mut (impl Receiver + ?Sized)) 
     receive(Check::upper(LimitName::DriveCurrent, Slot::Drive, drawn_a, limit.get()))
 }
 
-/// Solves a point in its three variants and checks all that the core must keep there. `None` when a variant has no numbers
-/// or the receiver broke off; what could be checked has been.
+/// Solves a point in its three variants and checks all that the core must keep there.
 pub fn point(
     core: &Core,
     rail: &Rail,
     input: usize,
     load: usize,
     receive: &mut (impl Receiver + ?Sized),
-) -> Option<PointSolution> {
+) -> ControlFlow<(), PointSolution> {
     let index = core.conditions.point(input, load);
     let typical = running(solve(core, input, load, Variant::TYPICAL), index, receive)?;
-    if typical_checks(core, rail, input, load, &typical, receive).is_break() {
-        return None;
+    if let Some(operation) = &typical {
+        typical_checks(core, rail, input, load, operation, receive)?;
     }
-    let low = running(solve(core, input, load, Variant::low_inductance(core.choke)), index, receive);
-    if let Some(low) = &low
-        && peak_checks(core, rail, load, low, index, receive).is_break()
-    {
-        return None;
+    let low_inductance = running(solve(core, input, load, Variant::low_inductance(core.choke)), index, receive)?;
+    if let Some(operation) = &low_inductance {
+        peak_checks(core, rail, load, operation, index, receive)?;
     }
     let worst = running(solve(core, input, load, Variant::WORST), index, receive)?;
-    if heat_checks(core, rail, &worst, index, receive).is_break() {
-        return None;
+    if let Some(operation) = &worst {
+        heat_checks(core, rail, operation, index, receive)?;
     }
-    Some(PointSolution { typical, worst, low_inductance: low? })
+    ControlFlow::Continue(PointSolution { typical, low_inductance, worst })
 }
 
 /// The operation of a running point; else the limit that it breaks is handed on.
-fn running(outcome: Outcome, index: usize, receive: &mut (impl Receiver + ?Sized)) -> Option<Operation> {
+fn running(
+    outcome: Outcome,
+    index: usize,
+    receive: &mut (impl Receiver + ?Sized),
+) -> ControlFlow<(), Option<Operation>> {
     let check = match outcome {
-        Outcome::Running(operation) => return Some(operation),
+        Outcome::Running(operation) => return ControlFlow::Continue(Some(operation)),
         Outcome::Dropout => Check::plain(LimitName::Dropout, Slot::Stage, false),
         Outcome::Runaway => Check::plain(LimitName::Runaway, Slot::Stage, false),
-        Outcome::Underdriven(why) => Check::above(LimitName::GateVoltage, Slot::HighSwitch, why.gate_v, why.plateau_v),
+        Outcome::Underdriven(why) => Check::above(LimitName::GateVoltage, Slot::HighSwitch, why.gate_v, why.needed_v),
     };
-    // The point has no numbers whatever the receiver says to this.
-    let _ = receive(check.at(index));
-    None
+    receive(check.at(index))?;
+    ControlFlow::Continue(None)
 }
 
 fn typical_checks(

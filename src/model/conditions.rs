@@ -21,7 +21,7 @@ pub struct Conditions {
     pub typical: usize,
     /// Load currents, ascending and distinct.
     pub loads: Vec<LoadPoint>,
-    /// Index of the full load: the last.
+    /// Index of the full load.
     pub full_load: usize,
     /// Ambient, °C.
     pub ambient_c: f64,

@@ -33,13 +33,14 @@ pub struct GateDrive {
     pub pull_down_ohm: f64,
 }
 
-/// The plateau of a current to be switched lies at or above the gate supply.
+/// The gate supply does not switch the part: it does not exceed the plateau of a current to be switched, or lies below the
+/// lowest gate voltage for which there is an on-resistance.
 #[derive(Debug, Clone, Copy, PartialEq)]
 pub struct Underdriven {
     /// Gate supply, V.
     pub gate_v: f64,
-    /// That plateau, V.
-    pub plateau_v: f64,
+    /// What it would have to exceed or reach, V.
+    pub needed_v: f64,
 }
 
 /// Channel energy of one turn-on at `valley_a` (0 when the current is reversed), J.
@@ -89,7 +90,7 @@ pub fn overlap_j(
     let valley_a = valley_a.max(0.0);
     let plateau_v = switch.plateau_at_v(peak_a.max(valley_a));
     if plateau_v >= drive.gate_v {
-        return Err(Underdriven { gate_v: drive.gate_v, plateau_v });
+        return Err(Underdriven { gate_v: drive.gate_v, needed_v: plateau_v });
     }
     Ok((turn_on_j(switch, drive, node_v, node_c, valley_a), turn_off_j(switch, drive, node_v, node_c, peak_a)))
 }
@@ -146,6 +147,7 @@ mod tests {
             miller_charge_c: miller_c,
             overdrive_charge_c: 0.0,
             post_threshold_charge_c: post_threshold_c,
+            lowest_gate_v: 0.0,
             threshold_v,
             plateau_v,
             transconductance_s: at_a / (plateau_v - threshold_v),
@@ -183,6 +185,6 @@ mod tests {
         let drive = GateDrive { gate_v: 3.0, pull_up_ohm: 1.0, pull_down_ohm: 1.0 };
         let weak = switch(1.5, 2.5, 8.0, 6.65e-10, 1.2e-9, 1.0);
         let found = overlap_j(&weak, &drive, 24.0, 1e-9, 0.0, 12.0);
-        assert_eq!(found, Err(Underdriven { gate_v: 3.0, plateau_v: 3.0 }));
+        assert_eq!(found, Err(Underdriven { gate_v: 3.0, needed_v: 3.0 }));
     }
 }

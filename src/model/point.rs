@@ -89,7 +89,7 @@ pub enum Outcome {
     Dropout,
     /// No stable temperature up to [`thermal::HIGHEST_C`].
     Runaway,
-    /// The gate supply does not reach the plateau of a current to be switched.
+    /// The gate supply does not switch a part.
     Underdriven(Underdriven),
 }
 
@@ -108,6 +108,9 @@ const CLIMB_K: f64 = 40.0;
 /// temperature on duty and ripple is iterated. Where that does not settle at once, near runaway or on the edge between two modes,
 /// a damped iteration from ambient decides.
 pub fn solve(core: &Core, input: usize, load: usize, variant: Variant) -> Outcome {
+    if let Some(why) = unspecified(core) {
+        return Outcome::Underdriven(why);
+    }
     let place = Place::new(core, input, load, variant);
     let ambient_c = core.conditions.ambient_c;
     let mut heat = Heat { high_c: ambient_c, rectifier_c: ambient_c, winding_c: ambient_c };
@@ -127,6 +130,20 @@ pub fn solve(core: &Core, input: usize, load: usize, variant: Variant) -> Outcom
     }
     damped(&place, ambient_c)
 }
+
+/// A switch without an on-resistance at the gate supply.
+fn unspecified(core: &Core) -> Option<Underdriven> {
+    let gate_v = core.conditions.gate_v;
+    let rectifier_v = match core.rectifier {
+        RectifierBank::Switch(bank) => bank.lowest_gate_v,
+        RectifierBank::Diode(_) => 0.0,
+    };
+    let needed_v = core.high.lowest_gate_v.max(rectifier_v);
+    (gate_v < needed_v * (1.0 - GATE_CLOSE)).then_some(Underdriven { gate_v, needed_v })
+}
+
+/// A gate supply this near below a given gate voltage meets it: limits hold within 1e-9.
+const GATE_CLOSE: f64 = 1e-9;
 
 fn damped(place: &Place, ambient_c: f64) -> Outcome {
     let mut heat = Heat { high_c: ambient_c, rectifier_c: ambient_c, winding_c: ambient_c };

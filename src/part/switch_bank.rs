@@ -50,6 +50,8 @@ pub struct SwitchBank {
     pub overdrive_charge_c: f64,
     /// Gate-source charge between threshold and plateau, C.
     pub post_threshold_charge_c: f64,
+    /// Lowest gate voltage at which the on-resistance is given, V: below it there is none.
+    pub lowest_gate_v: f64,
     /// Threshold, V.
     pub threshold_v: f64,
     /// Plateau, V.
@@ -163,6 +165,7 @@ impl Switch {
             miller_charge_c: n * self.gate_drain_charge_c.get(),
             overdrive_charge_c: n * self.overdrive_charge_c(at.gate_v),
             post_threshold_charge_c: n * self.post_threshold_charge_c(),
+            lowest_gate_v: self.lowest_gate_v(),
             threshold_v,
             plateau_v,
             transconductance_s: plateau_current_a / (plateau_v - threshold_v),

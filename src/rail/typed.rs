@@ -14,7 +14,7 @@ pub struct Input {
     pub maximum_v: Positive,
     /// Greatest ripple peak to peak, V; `None` for no limit.
     pub ripple_v: Option<Positive>,
-    /// Transient that the parts must stand, V.
+    /// Transient that the parts must stand, V; below the greatest input it asks for nothing more.
     pub surge_v: Positive,
 }
 
@@ -36,7 +36,7 @@ pub struct Output {
     pub voltage_v: Positive,
     /// Full load, A.
     pub current_a: Positive,
-    /// Current limit or start-up load, A.
+    /// Current limit or start-up load, A; below full load it asks for nothing more.
     pub peak_a: Positive,
     /// Greatest ripple peak to peak, V; `None` for no limit.
     pub ripple_v: Option<Positive>,
@@ -122,7 +122,7 @@ pub struct Range {
 /// One entry of the load profile.
 #[derive(Debug, Clone, Copy, PartialEq)]
 pub struct Load {
-    /// Current, A; at most the full load.
+    /// Current, A.
     pub current_a: Positive,
     /// Share of time, normalised: the shares of a rail sum to 1.
     pub share: Positive,

@@ -1,9 +1,9 @@
 //! The best banks for a core.
 
-use super::board::Board;
 use super::bound::reach::SHY;
 use super::bound::{Price, Rates};
 use super::field::Candidate;
+use super::leaders::Leaders;
 use super::request::Distinct;
 use super::trial::{BankTrial, CoreTrial, Place};
 use super::unit::Caps;
@@ -41,9 +41,7 @@ pub fn offers<'a>(list: &[(&'a Candidate<Bank>, Price)], rates: &Rates) -> Vec<O
 
 /// What a core is completed for.
 #[derive(Debug, Clone, Copy)]
-pub struct Purpose<'a, 'b> {
-    /// Where the stages go.
-    pub board: &'b Board<'a>,
+pub struct Purpose<'b> {
     /// Exchange rates of the offers.
     pub rates: &'b Rates,
     /// Caps on the sums.
@@ -57,21 +55,27 @@ pub struct Purpose<'a, 'b> {
 ///
 /// Pairs are tried in ascending order of what the input bank adds at least, and for each in that of the output bank, so both
 /// loops end at the first bank that cannot do.
-pub fn complete(core: &CoreTrial, own: &Price, inputs: &[Offer], outputs: &[Offer], purpose: &Purpose) {
+pub fn complete(
+    core: &CoreTrial,
+    own: &Price,
+    inputs: &[Offer],
+    outputs: &[Offer],
+    purpose: &Purpose,
+    leaders: &mut Leaders,
+) {
     let Some(least_output) = outputs.first().map(|offer| offer.figure) else { return };
     let mut best = f64::INFINITY;
     let mut judged_outputs: Vec<Option<BankTrial>> = Vec::new();
     let allowance = purpose.rates.allowance;
     let own_figure = own.at(purpose.rates) - allowance;
     for input in inputs {
-        let threshold = |best: f64| purpose.board.threshold().min(best);
-        if (own_figure + input.figure + least_output) * SHY > threshold(best) {
+        if (own_figure + input.figure + least_output) * SHY > leaders.threshold().min(best) {
             break;
         }
         let with_input = own.plus(&input.price);
         let Some(input_trial) = core.bank(input.candidate, Place::Input) else { continue };
         for (index, output) in outputs.iter().enumerate() {
-            if (own_figure + input.figure + output.figure) * SHY > threshold(best) {
+            if (own_figure + input.figure + output.figure) * SHY > leaders.threshold().min(best) {
                 break;
             }
             if index == judged_outputs.len() {
@@ -85,7 +89,7 @@ pub fn complete(core: &CoreTrial, own: &Price, inputs: &[Offer], outputs: &[Offe
                 if purpose.distinct != Distinct::Stage {
                     best = best.min(ranked.burden);
                 }
-                purpose.board.offer(ranked);
+                leaders.offer(ranked);
             }
         }
     }

@@ -3,7 +3,6 @@
 //! [`field`] fits every part to the rail once, [`trial`] judges one core and its banks, [`order`] says which of two stages comes
 //! first, [`leaders`] keeps the best. [`exhaustive`] tries every stage.
 
-pub mod board;
 pub mod bound;
 pub mod completion;
 pub mod exhaustive;

@@ -186,8 +186,8 @@ impl<'a> CoreTrial<'a> {
         for input in 0..conditions.inputs_v.len() {
             for load in 0..conditions.loads.len() {
                 match limit::core::point(&core, field.rail, input, load, &mut receive) {
-                    Some(solution) => solutions.push(solution),
-                    None => return Err(solutions),
+                    ControlFlow::Continue(solution) if solution.is_whole() => solutions.push(solution),
+                    _ => return Err(solutions),
                 }
             }
         }
@@ -195,8 +195,10 @@ impl<'a> CoreTrial<'a> {
         let switch_rectifier = trio.rectifier.kind() == RectifierKind::Switch;
         for (load, point) in conditions.loads.iter().enumerate() {
             if point.share > 0.0 {
-                let solution = &solutions[conditions.point(conditions.typical, load)];
-                weighted.add(conditions, load, &solution.typical, switch_rectifier);
+                match solutions[conditions.point(conditions.typical, load)].typical {
+                    Some(operation) => weighted.add(conditions, load, &operation, switch_rectifier),
+                    None => return Err(solutions),
+                }
             }
         }
         Ok(Self { field, trio, core, own, weighted, footing: trio.footing(), solutions })
@@ -241,6 +243,12 @@ impl<'a> CoreTrial<'a> {
             if flow.is_break() {
                 return None;
             }
+        }
+        let receive = &mut |check: Check| keeper.judge(&check);
+        if place == Place::Output
+            && limit::bank::load_step(&candidate.bank, &self.core, self.field.rail, receive).is_break()
+        {
+            return None;
         }
         Some(BankTrial { candidate, keeper })
     }

@@ -5,7 +5,7 @@ use toml::de::{DeTable, DeValue};
 
 use super::reader::{Node, Reader};
 use crate::quantity::Positive;
-use crate::rail::defaults::{Key, LOAD_CURRENT, LOAD_SHARE, MOST_LISTED, OUTPUT_CURRENT, Preset};
+use crate::rail::defaults::{Key, LOAD_CURRENT, LOAD_SHARE, MOST_LISTED, Preset};
 use crate::rail::origin::Value;
 use crate::rail::typed::Load;
 
@@ -80,11 +80,6 @@ fn load<'t>(
 fn current<'t>(reader: &mut Reader<'t>, number: usize, node: Node<'t>) -> Option<Positive> {
     let current_a = reader.value(&LOAD_CURRENT, node).and_then(Positive::new)?;
     reader.written_as(key_of(&LOAD_CURRENT, number), &LOAD_CURRENT, Value::Number(current_a.get()), node.span().start);
-    if reader.facts.full_load_a.is_some_and(|full_load_a| current_a > full_load_a) {
-        let full = reader.said(OUTPUT_CURRENT.path);
-        let found = format!("the load of {} is above the full load of {full}", reader.source(node));
-        reader.conflict_at(node.span(), found, format!("at most {full}"));
-    }
     Some(current_a)
 }
 

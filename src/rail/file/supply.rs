@@ -21,13 +21,6 @@ pub(super) fn input(reader: &mut Reader<'_>) -> Option<Input> {
     ascending(reader, INPUT_TYPICAL.path, typical_v, INPUT_MAX.path, maximum_v, "greatest input");
     let ripple_v = reader.following(&INPUT_RIPPLE, minimum_v);
     let surge_v = reader.following(&INPUT_SURGE, maximum_v);
-    if let (Some(Some(surge_v)), Some(maximum_v)) = (surge_v, maximum_v)
-        && surge_v < maximum_v
-    {
-        let greatest = reader.said(greatest_path(reader));
-        let found = format!("the surge of {} is below the greatest input of {greatest}", reader.said(INPUT_SURGE.path));
-        reader.conflict(INPUT_SURGE.path, found, format!("{greatest} or more"), "");
-    }
     Some(Input {
         minimum_v: minimum_v?,
         typical_v: typical_v?,
@@ -61,10 +54,6 @@ pub(super) fn least_path(reader: &Reader<'_>) -> &'static str {
     if reader.find(INPUT_MIN.path).is_some() { INPUT_MIN.path } else { VOLTAGE }
 }
 
-fn greatest_path(reader: &Reader<'_>) -> &'static str {
-    if reader.find(INPUT_MAX.path).is_some() { INPUT_MAX.path } else { VOLTAGE }
-}
-
 fn ascending(
     reader: &mut Reader<'_>,
     low_path: &str,
@@ -94,13 +83,6 @@ pub(super) fn output(reader: &mut Reader<'_>) -> Option<Output> {
     let current_a = reader.positive(&OUTPUT_CURRENT);
     reader.facts.full_load_a = current_a;
     let peak_a = reader.following(&OUTPUT_PEAK, current_a);
-    if let (Some(Some(peak_a)), Some(current_a)) = (peak_a, current_a)
-        && peak_a < current_a
-    {
-        let full = reader.said(OUTPUT_CURRENT.path);
-        let found = format!("the peak of {} is below the full load of {full}", reader.said(OUTPUT_PEAK.path));
-        reader.conflict(OUTPUT_PEAK.path, found, format!("{full} or more"), "");
-    }
     let ripple_v = reader.following(&OUTPUT_RIPPLE, voltage_v);
     let step = step(reader);
     Some(Output { voltage_v: voltage_v?, current_a: current_a?, peak_a: peak_a??, ripple_v: ripple_v?, step: step? })
