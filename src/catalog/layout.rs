@@ -199,12 +199,13 @@ fn plain(field: &Field, columns: &[Column]) -> Option<(Unit, Range)> {
     }
 }
 
-/// The column among `places` that gives the same quantity at the same condition, written alike: a plain column may stand beside
-/// one that writes its default condition.
+/// The column among `places` that gives the same quantity at the same condition. A nominal value may stand beside a measured one
+/// at no bias, which then wins.
 fn twin(heading: &Heading, fields: &[Field], places: &[usize]) -> Option<usize> {
-    let same = |place: &usize| {
-        matches!(fields[*place],
-            Field::Known(other) if other.condition == heading.condition && other.explicit == heading.explicit)
+    let nominal = heading.condition == Some(0.0);
+    let same = |place: &usize| match fields[*place] {
+        Field::Known(other) => other.condition == heading.condition && (other.explicit == heading.explicit || !nominal),
+        Field::Unknown | Field::Nameless => false,
     };
     places.iter().copied().find(same)
 }
