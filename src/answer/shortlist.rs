@@ -6,18 +6,20 @@ use crate::account::{Account, account};
 use crate::limit::LimitName;
 use crate::part::{Parts, Slot};
 use crate::rail::Rail;
-use crate::search::{Distinct, Dropped, Found, Ranked, Request, pruned::pruned, relax::relaxed};
+use crate::search::{Distinct, Dropped, Found, Progress, Ranked, Request, pruned::pruned, relax::relaxed};
 use crate::stage::NamedStage;
 
 /// How a shortlist is asked for.
-#[derive(Debug, Clone, Copy, PartialEq, Eq)]
-pub struct Options {
+#[derive(Debug, Clone, Copy)]
+pub struct Options<'a> {
     /// How many stages.
     pub top: usize,
     /// Which stages count as different.
     pub distinct: Distinct,
     /// Worker threads; 0 for one a processor.
     pub threads: usize,
+    /// Where to tell how far the search is, and to hear that it shall stop.
+    pub progress: Option<&'a Progress>,
 }
 
 /// The limit that a stage comes nearest to.
@@ -84,6 +86,8 @@ pub struct Shortlist {
     pub evaluated: u64,
     /// Whether the list is proven to be the true one.
     pub proven: bool,
+    /// Least burden that an untried stage could have, where the search was stopped.
+    pub open_bound: Option<f64>,
     /// The stages, best first.
     pub picks: Vec<Pick>,
     /// Parts dropped before crossing, by limit and slot.
@@ -93,14 +97,14 @@ pub struct Shortlist {
 }
 
 /// The k best stages; when nothing passes, how far each limit alone would have to give.
-pub fn shortlist(rail: &Rail, parts: &Parts, options: &Options) -> Shortlist {
+pub fn shortlist<'a>(rail: &'a Rail, parts: &'a Parts, options: &Options<'a>) -> Shortlist {
     let request =
         Request { distinct: options.distinct, threads: options.threads, ..Request::new(rail, parts, options.top) };
-    let Found { ranked, crossed, evaluated, proven, dropped } = pruned(&request);
+    let Found { ranked, crossed, evaluated, proven, open_bound, dropped } = pruned(&request);
     let picks: Vec<Pick> =
         ranked.iter().enumerate().filter_map(|(place, ranked)| pick(rail, parts, place + 1, ranked)).collect();
-    let nothing_passes = ranked.is_empty().then(|| nearest_misses(&request));
-    Shortlist { rail: rail.name.clone(), crossed, evaluated, proven, picks, dropped, nothing_passes }
+    let nothing_passes = (ranked.is_empty() && proven).then(|| nearest_misses(&Request { progress: None, ..request }));
+    Shortlist { rail: rail.name.clone(), crossed, evaluated, proven, open_bound, picks, dropped, nothing_passes }
 }
 
 /// A line of the shortlist; `None` only for a stage that does not pass.

@@ -74,6 +74,9 @@ pub(super) struct ShortlistArgs {
     /// Which stages count as different
     #[arg(long, value_enum, default_value_t)]
     pub distinct: DistinctArg,
+    /// When stopped by Ctrl-C, print what has been found, marked as not proven, with the gap that is left
+    #[arg(long)]
+    pub best_so_far: bool,
     /// Save the rail, the catalog rows used and the list, for `account --from` and later comparison
     #[arg(long, value_name = "FILE")]
     pub save: Option<PathBuf>,

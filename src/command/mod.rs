@@ -11,6 +11,7 @@ mod rail;
 mod saved;
 mod shortlist;
 mod starter;
+mod watch;
 
 use std::ffi::OsString;
 use std::process::ExitCode;
@@ -28,6 +29,8 @@ enum Done {
     NothingPasses,
     /// Exit status 2: the result tells what is bad in the input.
     BadInput,
+    /// Exit status 130: the user stopped it, as a shell counts a process ended by Ctrl-C.
+    Stopped,
 }
 
 /// Runs one command; its exit status: 0 done, 1 done but nothing meets the limits, 2 bad input or usage, 3 the machine failed.
@@ -59,6 +62,7 @@ pub fn run(arguments: impl IntoIterator<Item = OsString>) -> ExitCode {
         Ok(Done::Well) => ExitCode::SUCCESS,
         Ok(Done::NothingPasses) => ExitCode::from(1),
         Ok(Done::BadInput) => ExitCode::from(2),
+        Ok(Done::Stopped) => ExitCode::from(130),
         Err(failure) => {
             failure.tell();
             failure.exit_code()

@@ -1,18 +1,30 @@
 //! `wattsieve shortlist`
 
+use std::sync::Arc;
+
 use super::args::{DistinctArg, ShortlistArgs};
 use super::failure::Failure;
 use super::saved::{Saved, SavedOptions, SavedRail};
+use super::watch::watched;
 use super::{Done, input, output};
 use crate::answer::shortlist::{Options, shortlist};
+use crate::search::Progress;
 use crate::show::{self, Format};
 
 pub(super) fn run(command: &ShortlistArgs) -> Result<Done, Failure> {
     let common = &command.common;
     let (rail, read) = input::rail_and_catalogs(command.rail.as_deref(), common, command.save.is_some())?;
     let top = command.top as usize;
-    let options = Options { top, distinct: command.distinct.into(), threads: common.threads };
-    let list = shortlist(&rail.reading.rail, &read.parts, &options);
+    let progress = Arc::new(Progress::new());
+    let stop = Arc::clone(&progress);
+    ctrlc::set_handler(move || stop.stop())
+        .map_err(|error| Failure::Machine(format!("cannot listen for Ctrl-C: {error}")))?;
+    let distinct = command.distinct.into();
+    let options = Options { top, distinct, threads: common.threads, progress: Some(&progress) };
+    let list = watched(common, &progress, || shortlist(&rail.reading.rail, &read.parts, &options));
+    if !list.proven && !command.best_so_far {
+        return Ok(Done::Stopped);
+    }
     let text = match common.format.into() {
         Format::Table => show::shortlist::screen(&list),
         Format::Csv => show::csv::shortlist(&list),
@@ -30,5 +42,9 @@ pub(super) fn run(command: &ShortlistArgs) -> Result<Done, Failure> {
         output::write_file(&saved.to_text()?, path)?;
     }
     output::write(&text, common.out.as_deref())?;
-    Ok(if list.picks.is_empty() { Done::NothingPasses } else { Done::Well })
+    Ok(match (list.proven, list.picks.is_empty()) {
+        (false, _) => Done::Stopped,
+        (true, true) => Done::NothingPasses,
+        (true, false) => Done::Well,
+    })
 }

@@ -37,6 +37,7 @@ pub fn exhaustive(request: &Request) -> Found {
         crossed: field.crossed,
         evaluated,
         proven: true,
+        open_bound: None,
         dropped: field.dropped.clone(),
     }
 }

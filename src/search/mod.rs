@@ -9,6 +9,7 @@ pub mod exhaustive;
 pub mod field;
 pub mod leaders;
 pub mod order;
+pub mod progress;
 pub mod pruned;
 pub mod relax;
 pub mod request;
@@ -17,4 +18,5 @@ pub mod unit;
 
 pub use field::{Dropped, Field};
 pub use order::Ranked;
+pub use progress::Progress;
 pub use request::{Distinct, Found, Request, Tolerance};

@@ -12,11 +12,13 @@ use super::bound::{Price, Rates};
 use super::completion::{Offer, Purpose, complete, offers};
 use super::field::{AtFrequency, Candidate, Field};
 use super::leaders::Leaders;
+use super::progress::Progress;
 use super::request::{Found, Request};
 use super::trial::{CoreTrial, Trio};
 use super::unit::{Aim, Caps, Refined, Slot, Unit};
 use crate::limit::core::PointSolution;
 use crate::part::Choke;
+use crate::stage::RectifierKind;
 
 /// Passes over a unit when only its bound is wanted, and when it is searched.
 const BOUND_PASSES: usize = 1;
@@ -34,7 +36,7 @@ pub fn pruned(request: &Request) -> Found {
     let search = Search { request, field: &field, caps: Caps::of(&field, request.tolerated) };
     let run = || search.run(&frequencies);
     // Without a pool of its own the work runs on the one every program has: the answer is the same.
-    let harvest = match rayon::ThreadPoolBuilder::new().num_threads(request.threads).build() {
+    let (harvest, open_bound) = match rayon::ThreadPoolBuilder::new().num_threads(request.threads).build() {
         Ok(pool) => pool.install(run),
         Err(_) => run(),
     };
@@ -42,7 +44,8 @@ pub fn pruned(request: &Request) -> Found {
         ranked: harvest.leaders.into_entries(),
         crossed: field.crossed,
         evaluated: harvest.evaluated,
-        proven: true,
+        proven: open_bound.is_none(),
+        open_bound,
         dropped: field.dropped.clone(),
     }
 }
@@ -76,11 +79,15 @@ impl<'a> Search<'a, '_> {
         Harvest { leaders: Leaders::new(parts, distinct, top), evaluated: 0 }
     }
 
-    fn run(&self, frequencies: &[AtFrequency]) -> Harvest<'a> {
+    /// The list, and the least burden of what is left untried when the search is stopped.
+    fn run(&self, frequencies: &[AtFrequency]) -> (Harvest<'a>, Option<f64>) {
         let units: Vec<Unit> = frequencies.iter().flat_map(|at| Unit::all(self.field, at)).collect();
         let probed: Vec<(f64, &Unit, Harvest)> = units
             .par_iter()
             .filter_map(|unit| {
+                if self.stopped() {
+                    return Some((0.0, unit, self.nothing_yet()));
+                }
                 let refined = unit.refine(&self.aim(f64::INFINITY, BOUND_PASSES))?;
                 Some((refined.bound, unit, self.probe(unit, &refined)))
             })
@@ -92,22 +99,49 @@ impl<'a> Search<'a, '_> {
             harvest = harvest.merge(probe);
         }
         bounded.sort_by(|a, b| a.0.total_cmp(&b.0));
-        for batch in bounded.chunks(BATCH) {
+        let cores = |unit: &Unit| self.cores_per_choke(unit) * unit.chokes.len() as f64;
+        let weight = |units: &[(f64, &Unit)]| units.iter().map(|(_, unit)| cores(unit)).sum::<f64>();
+        let all: f64 = units.iter().map(cores).sum();
+        for (number, batch) in bounded.chunks(BATCH).enumerate() {
             let threshold = harvest.leaders.threshold();
+            let left = &bounded[number * BATCH..];
             let open: Vec<&Unit> =
                 batch.iter().take_while(|(bound, _)| bound * SHY <= threshold).map(|(_, unit)| *unit).collect();
-            let searched: Vec<Harvest> = open.par_iter().map(|unit| self.unit(unit, &harvest)).collect();
-            harvest = searched.into_iter().fold(harvest, Harvest::merge);
-            if open.len() < batch.len() {
+            if open.is_empty() {
                 break;
             }
+            if let Some(progress) = self.request.progress {
+                let within = left.partition_point(|(bound, _)| bound * SHY <= threshold);
+                progress.tell(1.0 - weight(&left[..within]) / all, threshold, left[0].0);
+            }
+            let searched: Vec<Harvest> = open.par_iter().map(|unit| self.unit(unit, &harvest)).collect();
+            harvest = searched.into_iter().fold(harvest, Harvest::merge);
+            if self.stopped() {
+                return (harvest, Some(left[0].0));
+            }
         }
-        harvest
+        (harvest, None)
+    }
+
+    /// How many pairs of high switch and rectifier a unit has.
+    fn cores_per_choke(&self, unit: &Unit) -> f64 {
+        let pairs = match unit.kind {
+            RectifierKind::Switch => self.field.high_beside_switch.len() * self.field.switch_rectifiers.len(),
+            RectifierKind::Diode => self.field.high_beside_diode.len() * self.field.diode_rectifiers.len(),
+        };
+        pairs as f64
+    }
+
+    fn stopped(&self) -> bool {
+        self.request.progress.is_some_and(Progress::stopped)
     }
 
     /// One unit, with the list as it stands.
     fn unit(&self, unit: &Unit, before: &Harvest<'a>) -> Harvest<'a> {
         let mut harvest = Harvest { leaders: before.leaders.clone(), evaluated: 0 };
+        if self.stopped() {
+            return harvest;
+        }
         if let Some(refined) = unit.refine(&self.aim(harvest.leaders.threshold(), SEARCH_PASSES)) {
             self.search(unit, &refined, &mut harvest);
         }
@@ -138,7 +172,7 @@ impl<'a> Search<'a, '_> {
         for choke in &refined.chokes {
             let choke_figure = choke.price.at(rates) - rates.allowance;
             let least = choke_figure + least_high + least_rectifier;
-            if (least + refined.floor.at(rates)) * SHY > harvest.leaders.threshold() {
+            if (least + refined.floor.at(rates)) * SHY > harvest.leaders.threshold() || self.stopped() {
                 break;
             }
             let outputs = offers(&refined.outputs(&aim, Some(choke)), rates);
@@ -163,7 +197,7 @@ impl<'a> Search<'a, '_> {
         let least_rectifier = with.refined.rectifiers[0].price.at(rates);
         for high in &with.refined.highs {
             let high_figure = base_figure + high.price.at(rates);
-            if (high_figure + least_rectifier) * SHY > harvest.leaders.threshold() {
+            if (high_figure + least_rectifier) * SHY > harvest.leaders.threshold() || self.stopped() {
                 break;
             }
             let with_high = base.plus(&high.price);

@@ -4,6 +4,7 @@ use std::ops::ControlFlow;
 
 use super::field::Dropped;
 use super::order::Ranked;
+use super::progress::Progress;
 use crate::footing::Footing;
 use crate::limit::{Check, LimitName, total};
 use crate::part::Parts;
@@ -38,12 +39,23 @@ pub struct Request<'a> {
     pub worth: Worth,
     /// A limit that may be broken, and by how much.
     pub tolerated: Option<Tolerance>,
+    /// Where to tell how far the search is, and to hear that it shall stop.
+    pub progress: Option<&'a Progress>,
 }
 
 impl<'a> Request<'a> {
     /// The best stages by the rail's own worth, one a triple, on all processors.
     pub const fn new(rail: &'a Rail, parts: &'a Parts, top: usize) -> Self {
-        Self { rail, parts, top, distinct: Distinct::Triple, threads: 0, worth: rail.worth, tolerated: None }
+        Self {
+            rail,
+            parts,
+            top,
+            distinct: Distinct::Triple,
+            threads: 0,
+            worth: rail.worth,
+            tolerated: None,
+            progress: None,
+        }
     }
 }
 
@@ -97,6 +109,8 @@ pub struct Found {
     pub evaluated: u64,
     /// Whether the list is proven to be the true one.
     pub proven: bool,
+    /// Least burden that an untried stage could have, where the search was stopped before the proof was complete.
+    pub open_bound: Option<f64>,
     /// Parts dropped before crossing.
     pub dropped: Vec<Dropped>,
 }

@@ -92,6 +92,7 @@ pub fn shortlist(list: &Shortlist) -> Value {
         "crossed": list.crossed.to_string(),
         "evaluated": list.evaluated,
         "proven": list.proven,
+        "open_bound": list.open_bound,
         "stages": list.picks.iter().map(pick).collect::<Vec<_>>(),
         "nothing_passes": list.nothing_passes,
         "dropped": dropped,

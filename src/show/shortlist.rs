@@ -16,9 +16,9 @@ fn times(part: &str, count: u32) -> String {
 /// The whole screen.
 pub fn screen(list: &Shortlist) -> String {
     let mut text = format!("{}\n\n", visible(&list.rail));
-    if list.picks.is_empty() {
+    if list.picks.is_empty() && list.proven {
         text.push_str(&nothing_passes(list));
-    } else {
+    } else if !list.picks.is_empty() {
         text.push_str(&parts_table(&list.picks));
         text.push('\n');
         text.push_str(&figures_table(&list.picks));
@@ -119,7 +119,14 @@ fn notes(list: &Shortlist) -> String {
 }
 
 fn foundation(list: &Shortlist) -> String {
-    let proof = if list.proven { "proven: every other stage is worse or breaks a limit" } else { "not proven" };
+    let proof = match (list.open_bound, list.picks.last()) {
+        (None, _) => "proven: every other stage is worse or breaks a limit".to_owned(),
+        (Some(open), Some(last)) => format!(
+            "NOT PROVEN: stopped; an untried stage could have a burden of {open:.4}, {:.2} % below the last place",
+            (last.burden - open) / last.burden * 100.0
+        ),
+        (Some(_), None) => "NOT PROVEN: stopped before any stage was found".to_owned(),
+    };
     let mut text = format!(
         "crossed {} stages, {}; the full model ran on {} of them\n",
         grouped(&list.crossed.to_string()),
