@@ -62,7 +62,7 @@ fn account() {
 #[test]
 fn account_of_a_stage_that_breaks_a_limit_says_so_first() {
     let folder = demo();
-    edit(folder.path(), "rail.toml", "area = \"400 mm²\"", "area = \"100 mm²\"");
+    edit(folder.path(), "rail.toml", "area = \"400 mm²\"", "area = \"50 mm²\"");
     edit(folder.path(), "rail.toml", "junction_margin = \"15 K\"", "junction_margin = \"80 K\"");
     let said = run_with(folder.path(), ["account", "rail.toml", "--stage", "-"], &first_stage());
     assert_eq!(said.status, 1, "{}", said.err);
