@@ -8,6 +8,7 @@ use super::alias::{ALIAS_FILE, Aliases};
 use super::column::Catalog;
 use super::raw::{RawRow, RawTable};
 use super::reading::{self, FromRow, Outcome};
+use super::sheet;
 use crate::fault::{Fault, Faults};
 use crate::part::Parts;
 
@@ -63,7 +64,8 @@ pub struct Read {
     pub machine_failed: bool,
 }
 
-/// Reads `switches.csv`, `diodes.csv`, `inductors.csv` and `capacitors.csv` in `folder`, and `columns.toml` if there is one.
+/// Reads `switches.csv`, `diodes.csv`, `inductors.csv` and `capacitors.csv` in `folder`, and `columns.toml` if there is one. Where
+/// a `.csv` is missing, the sheet of an `.xlsx`, `.xlsb` or `.ods` file of that name is read, or that sheet of `catalogs.xlsx`.
 ///
 /// Without `diodes.csv` there are no diodes, which is a warning; another missing catalog is an error.
 pub fn read_folder(folder: &Path, options: ReadOptions) -> Read {
@@ -83,7 +85,7 @@ pub fn read_folder(folder: &Path, options: ReadOptions) -> Read {
         let file = path.display().to_string();
         match File::open(&path) {
             Ok(source) => all.catalog(catalog, &file, source),
-            Err(error) if error.kind() == io::ErrorKind::NotFound => all.missing(catalog, &file),
+            Err(error) if error.kind() == io::ErrorKind::NotFound => all.sheet_or_missing(folder, catalog, &file),
             Err(error) => all.unreadable(&file, &error),
         }
     }
@@ -196,6 +198,19 @@ impl All {
             self.read.faults.append(outcome.row_faults);
         }
         (parts, RawTable { headers: if keep { outcome.headers } else { Vec::new() }, rows })
+    }
+
+    /// Without a table of text: the sheet of a spreadsheet file.
+    fn sheet_or_missing(&mut self, folder: &Path, catalog: Catalog, file: &str) {
+        match sheet::find(folder, catalog) {
+            None => self.missing(catalog, file),
+            Some(Ok(sheet)) => self.catalog(catalog, &sheet.name, sheet.text.as_bytes()),
+            Some(Err((file, why))) => {
+                let found = format!("the spreadsheet cannot be read: {why}");
+                let fault = Fault::of_file(&file, found, "an .xlsx, .xlsb or .ods file");
+                self.read.faults.push(fault.with_help("save it anew, or export each sheet as CSV"));
+            }
+        }
     }
 
     fn missing(&mut self, catalog: Catalog, file: &str) {

@@ -20,6 +20,7 @@ mod raw;
 mod reading;
 mod row;
 mod scan;
+mod sheet;
 mod switch;
 mod table;
 
