@@ -25,7 +25,8 @@ pub(super) fn write_file(text: &str, path: &Path) -> Result<(), Failure> {
     let name = path.display().to_string();
     let failed = |error: std::io::Error| Failure::file("cannot write", &name, &error);
     let folder = path.parent().filter(|parent| !parent.as_os_str().is_empty()).unwrap_or(Path::new("."));
-    let mut file = tempfile::NamedTempFile::new_in(folder).map_err(failed)?;
+    // The error names the temporary file, which means nothing to the user.
+    let mut file = tempfile::NamedTempFile::new_in(folder).map_err(|error| failed(error.kind().into()))?;
     file.write_all(text.as_bytes()).and_then(|()| file.as_file().sync_all()).map_err(failed)?;
     file.persist(path).map_err(|error| failed(error.error))?;
     Ok(())

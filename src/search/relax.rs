@@ -7,6 +7,7 @@ use rayon::iter::{IntoParallelRefIterator, ParallelIterator};
 use super::completion;
 use super::field::{AtFrequency, Candidate, Field};
 use super::order::Ranked;
+use super::progress::Progress;
 use super::pruned::pruned;
 use super::request::{Request, Tolerance};
 use super::trial::{CoreTrial, Rectifier, Trio};
@@ -56,7 +57,8 @@ fn least_excess(request: &Request, limit: LimitName, first: f64) -> f64 {
     let frequencies: Vec<AtFrequency> =
         request.rail.range.frequencies_hz.iter().map(|f| field.at_frequency(f.get())).collect();
     let units: Vec<Unit> = frequencies.iter().flat_map(|at| Unit::all(&field, at)).collect();
-    let hunt = Hunt { field: &field, limit, best_bits: AtomicU64::new(first.max(0.0).to_bits()) };
+    let hunt =
+        Hunt { field: &field, limit, progress: request.progress, best_bits: AtomicU64::new(first.max(0.0).to_bits()) };
     let run = || units.par_iter().for_each(|unit| hunt.explore(unit.whole(hunt.field)));
     // Without a pool of its own the work runs on the one every program has: the answer is the same.
     match rayon::ThreadPoolBuilder::new().num_threads(request.threads).build() {
@@ -69,6 +71,7 @@ fn least_excess(request: &Request, limit: LimitName, first: f64) -> f64 {
 struct Hunt<'a> {
     field: &'a Field<'a>,
     limit: LimitName,
+    progress: Option<&'a Progress>,
     best_bits: AtomicU64,
 }
 
@@ -89,7 +92,7 @@ impl<'a> Hunt<'a> {
 
     fn explore(&self, mut space: Refined<'a>) {
         let tolerance = self.tolerance();
-        if tolerance.excess < 0.0 {
+        if tolerance.excess < 0.0 || self.progress.is_some_and(Progress::stopped) {
             return;
         }
         let tolerated = Some(tolerance);

@@ -143,7 +143,8 @@ fn foundation(list: &Shortlist) -> String {
 fn nothing_passes(list: &Shortlist) -> String {
     let mut text = String::from("nothing meets all limits\n\n");
     match list.nothing_passes.as_deref() {
-        None | Some([]) => text.push_str("no limit alone, however far it gives, lets anything pass\n\n"),
+        None => text.push_str("stopped before it was known how far each limit would have to give\n\n"),
+        Some([]) => text.push_str("no limit alone, however far it gives, lets anything pass\n\n"),
         Some(misses) => {
             text.push_str("the least that one limit alone would have to give:\n");
             let mut grid = Grid::new(&[
