@@ -15,10 +15,13 @@ fn problems() -> u64 {
     std::env::var("WATTSIEVE_PROBLEMS").ok().and_then(|text| text.parse().ok()).unwrap_or(usual)
 }
 
+/// Problems beyond the usual range that a bound once got wrong: a low output behind a diode whose drop falls steeply with heat.
+const HARD: [u64; 1] = [24_261];
+
 #[test]
 fn pruned_equals_exhaustive_bit_for_bit() {
     let mut passing = 0;
-    for seed in 0..problems() {
+    for seed in (0..problems()).chain(HARD) {
         let Problem { rail, parts } = Problem::new(seed);
         let distinct = [Distinct::Triple, Distinct::Stage, Distinct::Switches][(seed % 3) as usize];
         let top = [1, 3, 10][(seed / 3 % 3) as usize];

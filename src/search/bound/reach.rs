@@ -127,12 +127,13 @@ impl Reach {
         if below_v > 0.0 { above_v / below_v } else { f64::INFINITY }
     }
 
-    /// Duty rises with every resistance, and with the drop one way or the other all along.
+    /// Duty rises with every resistance, and with the drop one way or the other all along. What runs has a duty above 0, though a
+    /// drop taken at a temperature that nothing reaches can ask for less.
     pub fn duty(&self) -> Span {
         let lo = |drop_v| self.duty_at(self.high_ohm.lo, self.winding_ohm.lo, drop_v, self.body_v.lo);
         let hi = |drop_v| self.duty_at(self.high_ohm.hi, self.winding_ohm.hi, drop_v, self.body_v.hi);
         Span {
-            lo: lo(self.drop_v.lo).min(lo(self.drop_v.hi)),
+            lo: lo(self.drop_v.lo).min(lo(self.drop_v.hi)).max(0.0),
             hi: hi(self.drop_v.lo).max(hi(self.drop_v.hi)).min(1.0 - self.dead_share),
         }
     }
@@ -160,7 +161,7 @@ impl Reach {
             volts(self.high_ohm.lo, winding_ohm, drop_v, self.body_v.hi)
         };
         Span {
-            lo: least(self.drop_v.lo).min(least(self.drop_v.hi)) / (self.inductance_h.hi * self.frequency_hz),
+            lo: least(self.drop_v.lo).min(least(self.drop_v.hi)).max(0.0) / (self.inductance_h.hi * self.frequency_hz),
             hi: greatest(self.drop_v.lo).max(greatest(self.drop_v.hi)) / (self.inductance_h.lo * self.frequency_hz),
         }
     }
