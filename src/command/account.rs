@@ -52,7 +52,8 @@ fn chosen(command: &AccountArgs, rail: &Rail, parts: &Parts) -> Result<Option<Na
             Failure::Usage(format!("{} holds {count} stages, there is no rank {rank}", path.display()))
         });
     }
-    let options = Options { top: rank, distinct: Distinct::Triple, threads: command.common.threads, progress: None };
+    let options =
+        Options { top: rank, distinct: Distinct::Triple, threads: usize::from(command.common.threads), progress: None };
     let picks = shortlist(rail, parts, &options).picks;
     let count = picks.len();
     match picks.into_iter().nth(rank - 1) {

@@ -9,12 +9,10 @@ use crate::show::Format;
 
 /// Ranks every combination of your approved power-stage parts by loss, cost and area, with proof.
 ///
-/// Example: wattsieve shortlist
-///
 /// Parts get hot, inputs can be high, batteries burn: what is ranked here is a shortlist to be verified by a qualified designer
 /// under the codes that apply.
 #[derive(Debug, Parser)]
-#[command(name = "wattsieve", version, max_term_width = 100)]
+#[command(name = "wattsieve", version, max_term_width = 100, before_help = "Example: wattsieve shortlist")]
 pub(super) struct Arguments {
     #[command(subcommand)]
     pub command: Command,
@@ -22,15 +20,20 @@ pub(super) struct Arguments {
 
 #[derive(Debug, Subcommand)]
 pub(super) enum Command {
-    /// Example: wattsieve shortlist rail.toml --catalogs parts. The best stages of all, proven
+    /// The best stages of all, proven
+    #[command(before_help = "Example: wattsieve shortlist --top 3")]
     Shortlist(ShortlistArgs),
-    /// Example: wattsieve account rail.toml --catalogs parts. One stage, every watt by cause at every point
+    /// One stage, every watt by cause at every point
+    #[command(before_help = "Example: wattsieve account --rank 2")]
     Account(AccountArgs),
-    /// Example: wattsieve rail rail.toml. The rail as understood, and where each value comes from
+    /// The rail as understood, and where each value comes from
+    #[command(before_help = "Example: wattsieve rail")]
     Rail(RailArgs),
-    /// Example: wattsieve audit --catalogs parts. The catalogs alone: bad and doubtful cells
+    /// The catalogs alone: bad and doubtful cells
+    #[command(before_help = "Example: wattsieve audit")]
     Audit(AuditArgs),
-    /// Example: wattsieve starter my-rail. Writes the demo rail and catalogs to begin from
+    /// Writes the demo rails and catalogs to begin from
+    #[command(before_help = "Example: wattsieve starter my-rail")]
     Starter(StarterArgs),
 }
 
@@ -47,9 +50,10 @@ pub(super) struct Common {
     /// Write the result to this file, all or nothing; - is standard output
     #[arg(long, value_name = "FILE")]
     pub out: Option<PathBuf>,
-    /// Worker threads; by default one a processor. The answer is the same whatever the number
-    #[arg(long, value_name = "N", default_value_t = 0, hide_default_value = true)]
-    pub threads: usize,
+    /// Worker threads, up to 1024; by default one a processor. The answer is the same whatever the number
+    #[arg(long, value_name = "N", default_value_t = 0, hide_default_value = true,
+          value_parser = clap::value_parser!(u16).range(0..=1024))]
+    pub threads: u16,
     /// Leave out bad catalog rows instead of stopping at them
     #[arg(long)]
     pub skip_bad: bool,
@@ -103,7 +107,8 @@ pub(super) struct AccountArgs {
     #[arg(long, value_name = "SAVED")]
     pub from: Option<PathBuf>,
     /// Which stage of the shortlist
-    #[arg(long, value_name = "N", default_value_t = 1, value_parser = clap::value_parser!(u32).range(1..=10_000))]
+    #[arg(long, value_name = "N", default_value_t = 1, value_parser = clap::value_parser!(u32).range(1..=10_000),
+          conflicts_with_all = ["stage", "parts"])]
     pub rank: u32,
 }
 

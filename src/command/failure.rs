@@ -24,9 +24,10 @@ impl Failure {
     pub(super) fn file(doing: &str, name: &str, error: &std::io::Error) -> Self {
         let text = format!("{doing} {name}: {error}");
         match error.kind() {
-            std::io::ErrorKind::NotFound | std::io::ErrorKind::IsADirectory | std::io::ErrorKind::NotADirectory => {
-                Self::Usage(text)
-            }
+            std::io::ErrorKind::NotFound
+            | std::io::ErrorKind::AlreadyExists
+            | std::io::ErrorKind::IsADirectory
+            | std::io::ErrorKind::NotADirectory => Self::Usage(text),
             std::io::ErrorKind::BrokenPipe => Self::ReaderGone,
             _ => Self::Machine(text),
         }

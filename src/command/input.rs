@@ -26,16 +26,22 @@ pub(super) fn is_stream(path: &Path) -> bool {
     path.as_os_str() == "-"
 }
 
+/// Longest rail, stage or saved shortlist that is read, bytes: an endless stream is refused before it takes all memory.
+const LONGEST_TEXT: u64 = 256 << 20;
+
 /// The text of a file, or of standard input.
 pub(super) fn text_of(path: &Path) -> Result<String, Failure> {
     let name = path.display().to_string();
-    let bytes = if is_stream(path) {
-        let mut bytes = Vec::new();
-        std::io::stdin().read_to_end(&mut bytes).map(|_| bytes)
+    let mut bytes = Vec::new();
+    let read = if is_stream(path) {
+        std::io::stdin().take(LONGEST_TEXT + 1).read_to_end(&mut bytes)
     } else {
-        std::fs::read(path)
+        std::fs::File::open(path).and_then(|file| file.take(LONGEST_TEXT + 1).read_to_end(&mut bytes))
+    };
+    read.map_err(|error| Failure::file("cannot read", &name, &error))?;
+    if bytes.len() as u64 > LONGEST_TEXT {
+        return Err(Failure::Usage(format!("{name} is longer than {} MiB", LONGEST_TEXT >> 20)));
     }
-    .map_err(|error| Failure::file("cannot read", &name, &error))?;
     String::from_utf8(bytes).map_err(|_| Failure::Usage(format!("{name} is not UTF-8 text: save it as UTF-8")))
 }
 

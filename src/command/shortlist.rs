@@ -20,7 +20,7 @@ pub(super) fn run(command: &ShortlistArgs) -> Result<Done, Failure> {
     ctrlc::set_handler(move || stop.stop())
         .map_err(|error| Failure::Machine(format!("cannot listen for Ctrl-C: {error}")))?;
     let distinct = command.distinct.into();
-    let options = Options { top, distinct, threads: common.threads, progress: Some(&progress) };
+    let options = Options { top, distinct, threads: usize::from(common.threads), progress: Some(&progress) };
     let list = watched(common, &progress, || shortlist(&rail.reading.rail, &read.parts, &options));
     if !list.proven && !command.best_so_far {
         return Ok(Done::Stopped);

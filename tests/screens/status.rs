@@ -35,7 +35,7 @@ fn nothing_meets_the_limits_is_1() {
 #[test]
 fn bad_usage_is_2_and_says_what_would_be_right() {
     let folder = demo();
-    let cases: [(&[&str], &str); 14] = [
+    let cases: [(&[&str], &str); 15] = [
         (&[], "Usage: wattsieve"),
         (&["shortlst"], "'shortlist'"),
         (&["shortlist", "--formt", "json"], "'--format'"),
@@ -45,8 +45,9 @@ fn bad_usage_is_2_and_says_what_would_be_right() {
         (&["shortlist", "nowhere.toml"], "nowhere.toml"),
         (&["shortlist", "."], "."),
         (&["shortlist", "--catalogs", "nowhere"], "nowhere"),
-        (&["account", "--rank", "3", "--stage", "nowhere.json"], "nowhere.json"),
+        (&["account", "--stage", "nowhere.json"], "nowhere.json"),
         (&["account", "--parts", "high=x"], "--frequency"),
+        (&["account", "--rank", "3", "--stage", "stage.json"], "--rank"),
         (&["account", "--parts", "high=x", "--frequency", "400 kHz", "--from", "saved.json"], "--from"),
         (&["account", "--from", "rail.toml"], "rail.toml"),
         (&["starter", "."], "nothing is overwritten"),
