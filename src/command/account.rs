@@ -2,6 +2,7 @@
 
 use super::args::AccountArgs;
 use super::failure::Failure;
+use super::input::Source;
 use super::saved::Saved;
 use super::{Done, input, named, output};
 use crate::account::account;
@@ -14,8 +15,13 @@ use crate::stage::NamedStage;
 
 pub(super) fn run(command: &AccountArgs) -> Result<Done, Failure> {
     let common = &command.common;
-    let (rail, read) = input::rail_and_catalogs(command.rail.as_deref(), common, false)?;
-    let Some(stage) = chosen(command, &rail.reading.rail, &read.parts)? else {
+    let saved = command.from.as_deref().map(Saved::read).transpose()?;
+    let source = match (&command.rail, &saved) {
+        (None, Some(saved)) => saved.rail.source(common),
+        (rail, _) => Source::given(rail.as_deref(), common)?,
+    };
+    let (rail, read) = input::rail_and_catalogs(&source, common, false)?;
+    let Some(stage) = chosen(command, saved, &rail, &read.parts)? else {
         if !common.quiet {
             anstream::eprintln!(
                 "nothing meets all limits, so there is no stage to account for; name one with --parts or --stage"
@@ -23,7 +29,7 @@ pub(super) fn run(command: &AccountArgs) -> Result<Done, Failure> {
         }
         return Ok(Done::NothingPasses);
     };
-    let account = account(&rail.reading.rail, &read.parts, &named::find(&stage, &read.parts)?);
+    let account = account(&rail, &read.parts, &named::find(&stage, &read.parts)?);
     let text = match common.format.into() {
         Format::Table => show::account::screen(&account),
         Format::Csv => show::csv::account(&account),
@@ -34,7 +40,12 @@ pub(super) fn run(command: &AccountArgs) -> Result<Done, Failure> {
 }
 
 /// The stage asked for; `None` when it is the first of a list that is empty.
-fn chosen(command: &AccountArgs, rail: &Rail, parts: &Parts) -> Result<Option<NamedStage>, Failure> {
+fn chosen(
+    command: &AccountArgs,
+    saved: Option<Saved>,
+    rail: &Rail,
+    parts: &Parts,
+) -> Result<Option<NamedStage>, Failure> {
     let rank = command.rank as usize;
     if let Some(path) = &command.stage {
         let name = path.display();
@@ -45,12 +56,14 @@ fn chosen(command: &AccountArgs, rail: &Rail, parts: &Parts) -> Result<Option<Na
     if let (Some(words), Some(frequency)) = (&command.parts, &command.frequency) {
         return named::from_words(words, frequency, parts).map(Some);
     }
-    if let Some(path) = &command.from {
-        let saved = Saved::read(path)?;
+    if let Some(saved) = saved {
         let count = saved.stages.len();
-        return saved.stages.into_iter().nth(rank - 1).map(|saved| Some(saved.stage)).ok_or_else(|| {
-            Failure::Usage(format!("{} holds {count} stages, there is no rank {rank}", path.display()))
-        });
+        return saved
+            .stages
+            .into_iter()
+            .nth(rank - 1)
+            .map(|saved| Some(saved.stage))
+            .ok_or_else(|| Failure::Usage(format!("{count} stages are saved, there is no rank {rank}")));
     }
     let options =
         Options { top: rank, distinct: Distinct::Triple, threads: usize::from(command.common.threads), progress: None };

@@ -103,7 +103,7 @@ pub(super) struct AccountArgs {
     /// Switching frequency with --parts, such as "400 kHz"
     #[arg(long, value_name = "FREQUENCY", requires = "parts")]
     pub frequency: Option<String>,
-    /// A saved shortlist to take the stage from
+    /// A saved shortlist to take the stage from, and its rail and catalogs where none are given
     #[arg(long, value_name = "SAVED")]
     pub from: Option<PathBuf>,
     /// Which stage of the shortlist

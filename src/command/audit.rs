@@ -6,7 +6,7 @@ use super::{Done, input, output};
 use crate::show::{self, Format};
 
 pub(super) fn run(command: &AuditArgs) -> Result<Done, Failure> {
-    let read = input::catalogs(None, &command.common, false);
+    let read = input::catalogs(command.common.catalogs.as_deref(), &command.common, false);
     if read.machine_failed {
         return Err(Failure::MachineFaults(read.faults));
     }

@@ -8,17 +8,33 @@ use super::failure::Failure;
 use crate::catalog::{self, ReadOptions};
 use crate::demo;
 use crate::fault::{Faults, Severity};
-use crate::rail::{self, Reading};
+use crate::rail::{self, Rail, Reading};
 
-/// A rail as read.
+/// What a command is about: the text of a rail, and where the catalogs are.
 #[derive(Debug)]
-pub(super) struct RailInput {
-    /// Its file as the user named it.
+pub(super) struct Source {
+    /// The rail's file as the user named it.
     pub name: String,
     /// Its text.
     pub text: String,
-    /// What it says.
-    pub reading: Reading,
+    /// The folder of the catalogs; `None` for the demo's.
+    pub catalogs: Option<PathBuf>,
+}
+
+impl Source {
+    /// The rail file and the catalogs of `--catalogs`, else those beside the rail file; without a rail file the demo's.
+    pub(super) fn given(rail: Option<&Path>, common: &Common) -> Result<Self, Failure> {
+        let (name, text) = match rail {
+            Some(path) => (path.display().to_string(), text_of(path)?),
+            None => (demo::RAIL_NAME.to_owned(), demo::RAIL_TEXT.to_owned()),
+        };
+        Ok(Self { name, text, catalogs: folder(rail, common) })
+    }
+
+    /// The typed rail.
+    pub(super) fn rail(&self) -> Result<Reading, Faults> {
+        rail::read(&self.name, &self.text)
+    }
 }
 
 /// A file of this name is standard input or output.
@@ -45,29 +61,14 @@ pub(super) fn text_of(path: &Path) -> Result<String, Failure> {
     String::from_utf8(bytes).map_err(|_| Failure::Usage(format!("{name} is not UTF-8 text: save it as UTF-8")))
 }
 
-/// Reads the rail file, or the demo's; the faults of a bad one.
-fn read_rail(path: Option<&Path>) -> Result<Result<RailInput, Faults>, Failure> {
-    let (name, text) = match path {
-        Some(path) => (path.display().to_string(), text_of(path)?),
-        None => (demo::RAIL_NAME.to_owned(), demo::RAIL_TEXT.to_owned()),
-    };
-    Ok(rail::read(&name, &text).map(|reading| RailInput { name, text, reading }))
-}
-
-/// The rail alone.
-pub(super) fn rail(path: Option<&Path>) -> Result<RailInput, Failure> {
-    read_rail(path)?.map_err(Failure::Input)
-}
-
 /// The rail and the catalogs, all their faults told together.
 pub(super) fn rail_and_catalogs(
-    path: Option<&Path>,
+    source: &Source,
     common: &Common,
     keep_rows: bool,
-) -> Result<(RailInput, catalog::Read), Failure> {
-    let rail = read_rail(path)?;
-    let mut read = catalogs(path, common, keep_rows);
-    match rail {
+) -> Result<(Rail, catalog::Read), Failure> {
+    let mut read = catalogs(source.catalogs.as_deref(), common, keep_rows);
+    match source.rail().map(|reading| reading.rail) {
         Ok(rail) if !read.faults.has_errors() => {
             warn(&read, common);
             Ok((rail, read))
@@ -84,11 +85,11 @@ fn bad(read: catalog::Read) -> Failure {
     if read.machine_failed { Failure::MachineFaults(read.faults) } else { Failure::Input(read.faults) }
 }
 
-/// The catalogs of `--catalogs`, else those beside the rail file, else the demo's.
-pub(super) fn catalogs(rail: Option<&Path>, common: &Common, keep_rows: bool) -> catalog::Read {
+/// The catalogs in a folder, or the demo's.
+pub(super) fn catalogs(folder: Option<&Path>, common: &Common, keep_rows: bool) -> catalog::Read {
     let options = ReadOptions { skip_bad: common.skip_bad, keep_rows };
-    match folder(rail, common) {
-        Some(folder) => catalog::read_folder(&folder, options),
+    match folder {
+        Some(folder) => catalog::read_folder(folder, options),
         None => {
             let files = demo::CATALOGS.iter().map(|(name, text)| (*name, text.as_bytes()));
             catalog::read_texts(files, options)

@@ -2,13 +2,14 @@
 
 use super::args::RailArgs;
 use super::failure::Failure;
-use super::{Done, input, output};
+use super::input::Source;
+use super::{Done, output};
 use crate::answer::rail::understood;
 use crate::show::{self, Format};
 
 pub(super) fn run(command: &RailArgs) -> Result<Done, Failure> {
-    let rail = input::rail(command.rail.as_deref())?;
-    let understood = understood(&rail.name, &rail.reading);
+    let source = Source::given(command.rail.as_deref(), &command.common)?;
+    let understood = understood(&source.name, &source.rail().map_err(Failure::Input)?);
     let text = match command.common.format.into() {
         Format::Table => show::rail::screen(&understood),
         Format::Csv => show::csv::rail(&understood),

@@ -1,11 +1,12 @@
 //! A saved shortlist: the rail, the options, the catalog rows that its stages use, and the list.
 
-use std::path::Path;
+use std::path::{Path, PathBuf};
 
 use serde::{Deserialize, Serialize};
 
+use super::args::Common;
 use super::failure::Failure;
-use super::input::text_of;
+use super::input::{Source, text_of};
 use crate::answer::shortlist::{Pick, Shortlist};
 use crate::catalog::{Catalog, RawTables};
 use crate::part::{Identity, Parts};
@@ -35,6 +36,21 @@ pub(super) struct SavedRail {
     pub file: String,
     /// Its text.
     pub text: String,
+    /// The folder of the catalogs as the user named it; `None` for the demo's.
+    pub catalogs: Option<String>,
+}
+
+impl SavedRail {
+    pub(super) fn of(source: Source) -> Self {
+        let Source { name, text, catalogs } = source;
+        Self { file: name, text, catalogs: catalogs.map(|folder| folder.to_string_lossy().into_owned()) }
+    }
+
+    /// The saved rail with the catalogs of today: those of `--catalogs`, else those of then.
+    pub(super) fn source(&self, common: &Common) -> Source {
+        let catalogs = common.catalogs.clone().or_else(|| self.catalogs.as_ref().map(PathBuf::from));
+        Source { name: self.file.clone(), text: self.text.clone(), catalogs }
+    }
 }
 
 /// The options of a saved shortlist.

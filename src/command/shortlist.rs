@@ -4,6 +4,7 @@ use std::sync::Arc;
 
 use super::args::{DistinctArg, ShortlistArgs};
 use super::failure::Failure;
+use super::input::Source;
 use super::saved::{Saved, SavedOptions, SavedRail};
 use super::watch::watched;
 use super::{Done, input, output};
@@ -13,7 +14,8 @@ use crate::show::{self, Format};
 
 pub(super) fn run(command: &ShortlistArgs) -> Result<Done, Failure> {
     let common = &command.common;
-    let (rail, read) = input::rail_and_catalogs(command.rail.as_deref(), common, command.save.is_some())?;
+    let source = Source::given(command.rail.as_deref(), common)?;
+    let (rail, read) = input::rail_and_catalogs(&source, common, command.save.is_some())?;
     let top = command.top as usize;
     let progress = Arc::new(Progress::new());
     let stop = Arc::clone(&progress);
@@ -21,7 +23,7 @@ pub(super) fn run(command: &ShortlistArgs) -> Result<Done, Failure> {
         .map_err(|error| Failure::Machine(format!("cannot listen for Ctrl-C: {error}")))?;
     let distinct = command.distinct.into();
     let options = Options { top, distinct, threads: usize::from(common.threads), progress: Some(&progress) };
-    let list = watched(common, &progress, || shortlist(&rail.reading.rail, &read.parts, &options));
+    let list = watched(common, &progress, || shortlist(&rail, &read.parts, &options));
     if !list.proven && !command.best_so_far {
         return Ok(Done::Stopped);
     }
@@ -31,7 +33,7 @@ pub(super) fn run(command: &ShortlistArgs) -> Result<Done, Failure> {
         Format::Json => show::json::text(&show::json::shortlist(&list)),
     };
     if let Some(path) = &command.save {
-        let rail = SavedRail { file: rail.name, text: rail.text };
+        let rail = SavedRail::of(source);
         let distinct = match command.distinct {
             DistinctArg::Triple => "triple",
             DistinctArg::Stage => "stage",

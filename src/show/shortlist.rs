@@ -103,7 +103,7 @@ fn notes(list: &Shortlist) -> String {
     if most > 0 {
         let _ = writeln!(
             text,
-            "{least} to {most} figures of each stage rest on a default; `wattsieve account --rank N --from SAVED` names them"
+            "{least} to {most} figures of each stage rest on a default; `wattsieve account RAIL --rank N` names them"
         );
     }
     let mut tightest: BTreeMap<&str, usize> = BTreeMap::new();
