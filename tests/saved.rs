@@ -40,3 +40,14 @@ fn a_saved_list_of_the_demo_stands_for_the_demo() {
     assert_eq!(from_saved, wattsieve(folder.path(), &["account", "--rank", "3"]));
     assert_eq!(from_saved.0, Some(0));
 }
+
+#[test]
+fn a_list_can_be_saved_to_standard_output_if_nothing_else_goes_there() {
+    let folder = tempfile::tempdir().expect("a folder");
+    let both = wattsieve(folder.path(), &["shortlist", "--save", "-"]);
+    assert_eq!(both, (Some(2), String::new()));
+    let (status, saved) = wattsieve(folder.path(), &["shortlist", "--save", "-", "--out", "list.txt"]);
+    assert_eq!(status, Some(0));
+    assert!(saved.starts_with('{') && saved.contains("saved/1"), "{saved}");
+    assert!(!folder.path().join("-").exists());
+}

@@ -25,7 +25,7 @@ pub(super) fn write(text: &str, out: Option<&Path>) -> Result<(), Failure> {
 
 /// Writes a file all at once: a reader sees the old one or the new one, never half of it. A link keeps pointing where it points,
 /// and what is no ordinary file, such as a device or a pipe, is written to and stays what it is.
-pub(super) fn write_file(text: &str, path: &Path) -> Result<(), Failure> {
+fn write_file(text: &str, path: &Path) -> Result<(), Failure> {
     replace(text, path).map_err(|error| Failure::file("cannot write", &path.display().to_string(), &error))
 }
 

@@ -4,7 +4,7 @@ use std::sync::Arc;
 
 use super::args::{DistinctArg, ShortlistArgs};
 use super::failure::Failure;
-use super::input::Source;
+use super::input::{Source, is_stream};
 use super::saved::{Saved, SavedOptions, SavedRail};
 use super::watch::watched;
 use super::{Done, input, output};
@@ -14,6 +14,11 @@ use crate::show::{self, Format};
 
 pub(super) fn run(command: &ShortlistArgs) -> Result<Done, Failure> {
     let common = &command.common;
+    if command.save.as_deref().is_some_and(is_stream) && common.out.as_deref().is_none_or(is_stream) {
+        return Err(Failure::Usage(
+            "the list and what is saved cannot both go to standard output; add --out".to_owned(),
+        ));
+    }
     let source = Source::given(command.rail.as_deref(), common)?;
     let (rail, read) = input::rail_and_catalogs(&source, common, command.save.is_some())?;
     let top = command.top as usize;
@@ -41,7 +46,7 @@ pub(super) fn run(command: &ShortlistArgs) -> Result<Done, Failure> {
         };
         let options = SavedOptions { top, distinct: distinct.to_owned() };
         let saved = Saved::new(rail, options, &list, &read.parts, &read.rows);
-        output::write_file(&saved.to_text()?, path)?;
+        output::write(&saved.to_text()?, Some(path))?;
     }
     output::write(&text, common.out.as_deref())?;
     Ok(match (list.proven, list.picks.is_empty()) {

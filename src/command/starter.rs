@@ -26,7 +26,11 @@ pub(super) fn run(command: &StarterArgs) -> Result<Done, Failure> {
         let shown = path.display().to_string();
         let failed = |error: std::io::Error| Failure::file("cannot write", &shown, &error);
         let mut file = std::fs::File::create_new(&path).map_err(failed)?;
-        file.write_all(text.as_bytes()).map_err(failed)?;
+        file.write_all(text.as_bytes()).map_err(|error| {
+            // Half a file would stand in the way of the next try.
+            let _ = std::fs::remove_file(&path);
+            failed(error)
+        })?;
     }
     let shown = folder.display();
     anstream::eprintln!("wrote the demo rails and catalogs, all invented, to {shown}");
