@@ -3,7 +3,7 @@
 use std::fmt::Write;
 
 use super::grid::{Grid, Side};
-use super::number::{area, celsius, in_unit, margin, money, percent, watts};
+use super::number::{area, celsius, in_unit, margin, money, percent, plain, watts};
 use super::shortlist::words;
 use crate::account::{Account, LimitRow, Losses, Mode, PointAccount, Reading};
 use crate::fault::visible;
@@ -42,8 +42,8 @@ pub fn causes(losses: &Losses) -> [(&'static str, &'static str, f64); 15] {
     ]
 }
 
-/// Points beside each other in one table.
-const POINTS_ABREAST: usize = 5;
+/// Most points beside each other in one table.
+const MOST_ABREAST: usize = 5;
 
 /// The whole screen.
 pub fn screen(account: &Account) -> String {
@@ -55,9 +55,11 @@ pub fn screen(account: &Account) -> String {
         text.push('\n');
     }
     text.push_str(&summary(account));
-    for (first, points) in account.points.chunks(POINTS_ABREAST).enumerate() {
+    let tables = account.points.len().div_ceil(MOST_ABREAST).max(1);
+    let abreast = account.points.len().div_ceil(tables).max(1);
+    for (table, points) in account.points.chunks(abreast).enumerate() {
         text.push('\n');
-        text.push_str(&points_table(points, first * POINTS_ABREAST));
+        text.push_str(&points_table(points, table * abreast));
     }
     text.push_str("\nLIMITS, each at its worst point\n");
     text.push_str(&limits_table(account, account.limits.iter().filter(|row| row.holds)));
@@ -116,7 +118,7 @@ fn points_table(points: &[PointAccount], first: usize) -> String {
     };
     for place in 0..15 {
         let (slot, cause, _) = causes(&Losses::default())[place];
-        figures(&format!("{slot} {cause}"), &|r| watts(causes(&r.losses_w)[place].2));
+        figures(&format!("{} {}", plain(slot), plain(cause)), &|r| watts(causes(&r.losses_w)[place].2));
     }
     figures("all losses", &|r| watts(r.loss_w));
     figures("efficiency", &|r| percent(r.efficiency));
@@ -128,6 +130,7 @@ fn points_table(points: &[PointAccount], first: usize) -> String {
     figures("input ripple", &|r| volts(r.input_ripple_v));
     figures("high switch rms", &|r| amps(r.rms_a.high_switch));
     figures("rectifier rms", &|r| amps(r.rms_a.rectifier));
+    figures("inductor rms", &|r| amps(r.rms_a.inductor));
     figures("input bank rms", &|r| amps(r.rms_a.input_bank));
     figures("output bank rms", &|r| amps(r.rms_a.output_bank));
     figures("high switch junction", &|r| celsius(r.temperature_c.high_switch));
@@ -158,7 +161,7 @@ fn limits_table<'a>(account: &Account, rows: impl Iterator<Item = &'a LimitRow>)
         });
         grid.row([
             row.limit.name().to_owned(),
-            row.slot.to_owned(),
+            plain(row.slot),
             row.part.clone(),
             number(row.value),
             number(row.bound),
@@ -179,7 +182,7 @@ fn assumed_table(account: &Account) -> String {
     ]);
     for row in &account.assumed {
         grid.row([
-            row.slot.to_owned(),
+            plain(row.slot),
             row.part.clone(),
             row.quantity.to_owned(),
             row.value.map_or_else(|| "nothing".to_owned(), |value| in_unit(value, row.unit)),

@@ -37,6 +37,11 @@ pub fn hertz(value: f64) -> String {
     engineering(value, Dimension::Frequency, 4)
 }
 
+/// A name of files as words: `high_switch` is the high switch.
+pub fn plain(name: &str) -> String {
+    name.replace('_', " ")
+}
+
 /// A whole number with blanks between groups of three digits.
 pub fn grouped(digits: &str) -> String {
     let mut text = String::new();

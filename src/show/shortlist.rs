@@ -4,7 +4,7 @@ use std::collections::BTreeMap;
 use std::fmt::Write;
 
 use super::grid::{Grid, Side};
-use super::number::{area, celsius, grouped, hertz, in_unit, margin, money, percent, watts};
+use super::number::{area, celsius, grouped, hertz, in_unit, margin, money, percent, plain, watts};
 use crate::answer::shortlist::{Pick, Shortlist};
 use crate::fault::visible;
 use crate::stage::NamedStage;
@@ -19,25 +19,27 @@ pub fn screen(list: &Shortlist) -> String {
     if list.picks.is_empty() && list.proven {
         text.push_str(&nothing_passes(list));
     } else if !list.picks.is_empty() {
-        text.push_str(&parts_table(&list.picks));
-        text.push('\n');
-        text.push_str(&figures_table(&list.picks));
-        text.push('\n');
+        for table in [stages_table, figures_table, banks_table] {
+            text.push_str(&table(&list.picks));
+            text.push('\n');
+        }
         text.push_str(&notes(list));
     }
     text.push_str(&foundation(list));
     text
 }
 
-fn parts_table(picks: &[Pick]) -> String {
+/// What each stage is, and how good.
+fn stages_table(picks: &[Pick]) -> String {
     let mut grid = Grid::new(&[
         ("rank", Side::Right),
         ("high switch", Side::Left),
         ("rectifier", Side::Left),
         ("inductor", Side::Left),
-        ("input bank", Side::Left),
-        ("output bank", Side::Left),
-        ("frequency", Side::Right),
+        ("burden", Side::Right),
+        ("efficiency", Side::Right),
+        ("loss", Side::Right),
+        ("", Side::Left),
     ]);
     for pick in picks {
         let stage = &pick.stage;
@@ -46,27 +48,25 @@ fn parts_table(picks: &[Pick]) -> String {
             times(&stage.high_switch.part, stage.high_switch.count),
             format!("{} ({})", times(&stage.rectifier.part, stage.rectifier.count), stage.rectifier.kind.name()),
             stage.inductor.part.clone(),
-            times(&stage.input_bank.part, stage.input_bank.count),
-            times(&stage.output_bank.part, stage.output_bank.count),
-            hertz(stage.frequency_hz),
+            format!("{:.4}", pick.burden),
+            percent(pick.weighted_efficiency),
+            watts(pick.weighted_loss_w),
+            if pick.core_loss_unknown { "†".to_owned() } else { String::new() },
         ]);
     }
-    grid.render(0)
+    grid.render_blocks()
 }
 
+/// What the loss is made of, what limits the stage, and what it costs.
 fn figures_table(picks: &[Pick]) -> String {
     let mut grid = Grid::new(&[
         ("rank", Side::Right),
-        ("burden", Side::Right),
-        ("efficiency", Side::Right),
-        ("loss", Side::Right),
         ("by resistance", Side::Right),
         ("by charge", Side::Right),
         ("hottest", Side::Right),
         ("tightest limit", Side::Left),
         ("cost", Side::Right),
         ("area", Side::Right),
-        ("", Side::Left),
     ]);
     for pick in picks {
         let tightest = pick.tightest.map_or_else(
@@ -75,24 +75,40 @@ fn figures_table(picks: &[Pick]) -> String {
         );
         grid.row([
             pick.rank.to_string(),
-            format!("{:.4}", pick.burden),
-            percent(pick.weighted_efficiency),
-            watts(pick.weighted_loss_w),
             watts(pick.resistance_w),
             watts(pick.charge_w),
             celsius(pick.hottest_junction_c),
             tightest,
             money(pick.cost),
             area(pick.area_mm2),
-            if pick.core_loss_unknown { "†".to_owned() } else { String::new() },
         ]);
     }
-    grid.render(0)
+    grid.render_blocks()
+}
+
+fn banks_table(picks: &[Pick]) -> String {
+    let mut grid = Grid::new(&[
+        ("rank", Side::Right),
+        ("input bank", Side::Left),
+        ("output bank", Side::Left),
+        ("frequency", Side::Right),
+    ]);
+    for pick in picks {
+        let NamedStage { input_bank, output_bank, frequency_hz, .. } = &pick.stage;
+        grid.row([
+            pick.rank.to_string(),
+            times(&input_bank.part, input_bank.count),
+            times(&output_bank.part, output_bank.count),
+            hertz(*frequency_hz),
+        ]);
+    }
+    grid.render_blocks()
 }
 
 /// What stands under the tables; writing to a string cannot fail.
 fn notes(list: &Shortlist) -> String {
-    let mut text = String::new();
+    let mut text =
+        String::from("by resistance: what of the loss falls with a larger switch; by charge: what grows with it\n");
     if list.picks.iter().any(|pick| pick.core_loss_unknown) {
         text.push_str("† core loss unknown and counted as none: the true loss is higher\n");
     }
@@ -101,9 +117,10 @@ fn notes(list: &Shortlist) -> String {
         .iter()
         .fold((usize::MAX, 0), |(least, most), pick| (least.min(pick.assumed), most.max(pick.assumed)));
     if most > 0 {
+        let figures = if least == most { most.to_string() } else { format!("{least} to {most}") };
         let _ = writeln!(
             text,
-            "{least} to {most} figures of each stage rest on a default; `wattsieve account RAIL --rank N` names them"
+            "{figures} figures of each stage rest on a default; `wattsieve account RAIL --rank N` names them"
         );
     }
     let mut tightest: BTreeMap<&str, usize> = BTreeMap::new();
@@ -120,7 +137,8 @@ fn notes(list: &Shortlist) -> String {
 
 fn foundation(list: &Shortlist) -> String {
     let proof = match (list.open_bound, list.picks.last()) {
-        (None, _) => "proven: every other stage is worse or breaks a limit".to_owned(),
+        (None, None) => "proven: every one of them breaks a limit".to_owned(),
+        (None, Some(_)) => "proven: every other stage is worse or breaks a limit".to_owned(),
         (Some(open), Some(last)) => format!(
             "NOT PROVEN: stopped; an untried stage could have a burden of {open:.4}, {:.2} % below the last place",
             (last.burden - open) / last.burden * 100.0
@@ -128,14 +146,15 @@ fn foundation(list: &Shortlist) -> String {
         (Some(_), None) => "NOT PROVEN: stopped before any stage was found".to_owned(),
     };
     let mut text = format!(
-        "crossed {} stages, {}; the full model ran on {} of them\n",
+        "crossed {} stages; the full model ran on {} of them\n{}\n",
         grouped(&list.crossed.to_string()),
-        proof,
-        grouped(&list.evaluated.to_string())
+        grouped(&list.evaluated.to_string()),
+        proof
     );
     for row in &list.dropped {
         let plural = if row.parts == 1 { "part" } else { "parts" };
-        let _ = writeln!(text, "  {} {plural} left out as {} by {}", row.parts, row.slot.name(), row.limit.name());
+        let _ =
+            writeln!(text, "  {} {plural} left out as {} by {}", row.parts, plain(row.slot.name()), row.limit.name());
     }
     text
 }

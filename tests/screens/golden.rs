@@ -67,7 +67,7 @@ fn account_of_a_stage_that_breaks_a_limit_says_so_first() {
     let said = run_with(folder.path(), ["account", "rail.toml", "--stage", "-"], &first_stage());
     assert_eq!(said.status, 1, "{}", said.err);
     let broken = said.out.split("LOSSES").next().expect("what stands before the losses");
-    assert!(broken.contains("junction  high_switch") && broken.contains("area      stage"), "{broken}");
+    assert!(broken.contains("junction  high switch") && broken.contains("area      stage"), "{broken}");
     golden("account_broken", &said.out);
 }
 
