@@ -99,7 +99,9 @@ const SETTLED_K: f64 = 1e-10;
 const DIRECT_STEPS: u32 = 40;
 /// Steps of the damped iteration: halving a gap of 500 K down to the resolution takes 60.
 const DAMPED_STEPS: u32 = 400;
-/// How far a part without a fixed point at the present currents moves up in a damped step, K.
+/// Steps of the creeping iteration: enough for a loop gain of 0.99.
+const CREEPING_STEPS: u32 = 4_000;
+/// How far a part moves up in a half step at the most, K.
 const CLIMB_K: f64 = 40.0;
 
 /// The model at one point: the lowest fixed point at or above ambient.
@@ -145,33 +147,58 @@ fn unspecified(core: &Core) -> Option<Underdriven> {
 /// A gate supply this near below a given gate voltage meets it: limits hold within 1e-9.
 const GATE_CLOSE: f64 = 1e-9;
 
+/// The same by half steps to where each part settles at the present currents. They do not arrive where a part settles nowhere at
+/// some of the currents on the way; what is left is decided by creeping.
 fn damped(place: &Place, ambient_c: f64) -> Outcome {
+    let towards = |flow: &Flow, heat: &Heat| {
+        let warmed = flow.warmed(heat, ambient_c);
+        let [high, rectifier, winding] = flow.targets(ambient_c);
+        Heat {
+            high_c: high.unwrap_or(warmed.high_c),
+            rectifier_c: rectifier.unwrap_or(warmed.rectifier_c),
+            winding_c: winding.unwrap_or(warmed.winding_c),
+        }
+    };
+    let (outcome, decided) = approach(place, ambient_c, DAMPED_STEPS, towards);
+    if decided { outcome } else { creeping(place, ambient_c) }
+}
+
+/// The same by half of what the present heat would warm each part by: below the lowest fixed point it is never leapt over.
+///
+/// A point that does not settle even so lies on the edge between two modes, which a stage there takes by turns: it stays where
+/// the steps end.
+fn creeping(place: &Place, ambient_c: f64) -> Outcome {
+    approach(place, ambient_c, CREEPING_STEPS, |flow, heat| flow.warmed(heat, ambient_c)).0
+}
+
+/// Half steps from ambient towards what `towards` says, none above [`CLIMB_K`]: where they end, and whether that decides.
+fn approach(place: &Place, ambient_c: f64, steps: u32, towards: impl Fn(&Flow, &Heat) -> Heat) -> (Outcome, bool) {
     let mut heat = Heat { high_c: ambient_c, rectifier_c: ambient_c, winding_c: ambient_c };
-    let mut last = None;
-    for _ in 0..DAMPED_STEPS {
+    let mut last = Outcome::Runaway;
+    for _ in 0..steps {
         let flow = match place.flow(&heat) {
             Ok(flow) => flow,
-            Err(Stop::Underdriven(why)) => return Outcome::Underdriven(why),
-            Err(Stop::Dropout) => return Outcome::Runaway,
+            Err(Stop::Underdriven(why)) => return (Outcome::Underdriven(why), true),
+            Err(Stop::Dropout) => return (Outcome::Runaway, true),
         };
-        let [high, rectifier, winding] = flow.targets(ambient_c);
-        let half_way = |now: f64, target: Option<f64>| now + target.map_or(CLIMB_K, |t| (t - now) / 2.0);
+        let target = towards(&flow, &heat);
+        let step = |now: f64, target: f64| now + ((target - now) / 2.0).min(CLIMB_K);
         let next = Heat {
-            high_c: half_way(heat.high_c, high),
-            rectifier_c: half_way(heat.rectifier_c, rectifier),
-            winding_c: half_way(heat.winding_c, winding),
+            high_c: step(heat.high_c, target.high_c),
+            rectifier_c: step(heat.rectifier_c, target.rectifier_c),
+            winding_c: step(heat.winding_c, target.winding_c),
         };
         if next.high_c.max(next.rectifier_c).max(next.winding_c) > thermal::HIGHEST_C {
-            return Outcome::Runaway;
+            return (Outcome::Runaway, true);
         }
         let moved_k = distance_k(&heat, &next);
-        last = flow.settled(ambient_c).map(|_| flow);
         heat = next;
+        last = Outcome::Running(flow.operation(&heat));
         if moved_k <= SETTLED_K / 2.0 {
-            break;
+            return (last, true);
         }
     }
-    last.map_or(Outcome::Runaway, |flow| Outcome::Running(flow.operation(&heat)))
+    (last, false)
 }
 
 fn distance_k(a: &Heat, b: &Heat) -> f64 {
@@ -377,6 +404,21 @@ impl Flow<'_> {
     fn settled(&self, ambient_c: f64) -> Option<Heat> {
         let [high_c, rectifier_c, winding_c] = self.targets(ambient_c);
         Some(Heat { high_c: high_c?, rectifier_c: rectifier_c?, winding_c: winding_c? })
+    }
+
+    /// Ambient and what each part's heat at `heat` would warm it by.
+    fn warmed(&self, heat: &Heat, ambient_c: f64) -> Heat {
+        let core = self.place.core;
+        let Operation { losses, .. } = self.operation(heat);
+        let rectifier_k_per_w = match core.rectifier {
+            RectifierBank::Switch(bank) => bank.thermal_k_per_w,
+            RectifierBank::Diode(bank) => bank.thermal_k_per_w,
+        };
+        Heat {
+            high_c: ambient_c + core.high.thermal_k_per_w * losses.high_switch.total_w(),
+            rectifier_c: ambient_c + rectifier_k_per_w * losses.rectifier.total_w(),
+            winding_c: ambient_c + core.choke.thermal_k_per_w * losses.inductor.total_w(),
+        }
     }
 
     fn operation(&self, heat: &Heat) -> Operation {
