@@ -2,6 +2,7 @@
 
 mod agreement;
 mod balance;
+mod bounds;
 mod draw;
 mod heat;
 mod modes;

@@ -47,9 +47,9 @@ pub fn hottest_c(bank: &SwitchBank, hottest_c: f64, around: &Around) -> f64 {
             let Some(flow) = flow else { continue };
             let heat = most(bank, reach, &flow, continuous, around);
             let fixed_w = heat.own_fixed_w + heat.foreign_w;
-            let coefficient = bank.coefficient_per_k.max(0.0);
             let ambient_c = around.conditions.ambient_c;
-            match linear_c(ambient_c, bank.thermal_k_per_w, fixed_w, heat.rising25_w, coefficient) {
+            let (rising25_w, coefficient) = most_rising(heat.rising25_w, bank.coefficient_per_k, ambient_c);
+            match linear_c(ambient_c, bank.thermal_k_per_w, fixed_w, rising25_w, coefficient) {
                 Some(c) => highest_c = highest_c.max(c),
                 None => return UNKNOWN_C,
             }
@@ -75,6 +75,16 @@ fn least_at(bank: &SwitchBank, r25_ohm: f64, reach: &Reach, around: &Around) -> 
         Some((heat.own_fixed_w + heat.rising25_w * (1.0 + alpha * (c - 25.0)), c))
     };
     lesser(settle(flows.continuous, true), settle(flows.discontinuous, false))
+}
+
+/// Loss at 25 °C and temperature coefficient of a resistance that is nowhere less than one that falls with temperature: such a
+/// one is greatest at ambient.
+pub(super) fn most_rising(rising25_w: f64, coefficient_per_k: f64, ambient_c: f64) -> (f64, f64) {
+    if coefficient_per_k < 0.0 {
+        (rising25_w * (1.0 + coefficient_per_k * (ambient_c - 25.0)), 0.0)
+    } else {
+        (rising25_w, coefficient_per_k)
+    }
 }
 
 /// The lesser of two alternatives in each figure.
@@ -145,5 +155,22 @@ fn most(bank: &SwitchBank, reach: &Reach, flow: &Flow, continuous: bool, around:
         own_fixed_w: edges_j.map_or(f64::INFINITY, |j| f * j),
         foreign_w: node_w,
         rising25_w: bank.r25_ohm * flow.duty.hi.min(1.0) * mean_a2,
+    }
+}
+
+#[cfg(test)]
+mod tests {
+    use super::*;
+
+    #[test]
+    fn a_falling_resistance_is_greatest_at_ambient() {
+        let at_w = |(rising25_w, coefficient): (f64, f64), t: f64| rising25_w * (1.0 + coefficient * (t - 25.0));
+        for ambient_c in [-20.0, 60.0] {
+            let most = most_rising(2.0, -0.001, ambient_c);
+            for above_k in [0.0, 10.0, 100.0] {
+                assert!(at_w(most, ambient_c + above_k) >= at_w((2.0, -0.001), ambient_c + above_k));
+            }
+        }
+        assert_eq!(most_rising(2.0, 0.005, -20.0), (2.0, 0.005));
     }
 }

@@ -1,7 +1,7 @@
 //! The least loss of a rectifier in a unit, with what it costs the high switch, and the hottest it can get.
 
 use super::around::{Around, SHORT_OF_LIMIT};
-use super::high::lesser;
+use super::high::{lesser, most_rising};
 use super::reach::{Flow, Reach};
 use super::span::Span;
 use super::spread::{UNKNOWN_C, diode_drop_v, resistance_ohm, temperature_shift_v};
@@ -133,7 +133,7 @@ pub fn hottest_switch_c(bank: &SwitchBank, hottest_c: f64, around: &Around) -> f
             let carried_a = if continuous { (2.0 * reach.load_a).max(flow.ripple_a.hi) } else { flow.ripple_a.hi };
             let dead_w = bank.body_drop_v * around.conditions.dead_time_s * reach.frequency_hz * carried_a;
             let rising25_w = bank.r25_ohm * mean_square_a2(reach, &flow, continuous).hi;
-            let alpha = bank.coefficient_per_k.max(0.0);
+            let (rising25_w, alpha) = most_rising(rising25_w, bank.coefficient_per_k, ambient_c);
             match linear_c(ambient_c, bank.thermal_k_per_w, dead_w, rising25_w, alpha) {
                 Some(c) => highest_c = highest_c.max(c),
                 None => return UNKNOWN_C,
