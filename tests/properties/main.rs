@@ -12,3 +12,4 @@ mod parallel;
 mod plain;
 #[path = "../search/problem.rs"]
 mod problem;
+mod units;
