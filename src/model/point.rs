@@ -188,7 +188,9 @@ fn approach(place: &Place, ambient_c: f64, steps: u32, towards: impl Fn(&Flow, &
             rectifier_c: step(heat.rectifier_c, target.rectifier_c),
             winding_c: step(heat.winding_c, target.winding_c),
         };
-        if next.high_c.max(next.rectifier_c).max(next.winding_c) > thermal::HIGHEST_C {
+        // Figures beyond all measure make heat that is no number: that leads to no temperature either.
+        let lost = target.high_c.is_nan() || target.rectifier_c.is_nan() || target.winding_c.is_nan();
+        if lost || next.high_c.max(next.rectifier_c).max(next.winding_c) > thermal::HIGHEST_C {
             return (Outcome::Runaway, true);
         }
         let moved_k = distance_k(&heat, &next);
