@@ -8,6 +8,7 @@ use super::request::Distinct;
 use super::trial::{BankTrial, CoreTrial, Place};
 use super::unit::Caps;
 use crate::part::Bank;
+use crate::stage::Choice;
 
 /// A bank that may pass, with the least that it adds.
 #[derive(Debug, Clone, Copy)]
@@ -19,6 +20,11 @@ pub struct Offer<'a> {
 }
 
 impl Offer<'_> {
+    /// Part and count.
+    pub const fn choice(&self) -> Choice {
+        self.candidate.choice
+    }
+
     /// The least it adds, at the unit's rates.
     pub const fn figure(&self) -> f64 {
         self.figure

@@ -161,7 +161,7 @@ fn count_within(space: &Refined, caps: &Caps) -> usize {
 }
 
 /// Two boxes that make up one: its longest list cut in the middle.
-fn halves(mut space: Refined) -> (Refined, Refined) {
+pub(super) fn halves(mut space: Refined) -> (Refined, Refined) {
     let longest = space.highs.len().max(space.rectifiers.len()).max(space.chokes.len());
     let mut other = space.clone();
     if space.rectifiers.len() == longest {
