@@ -26,6 +26,9 @@ pub(super) enum Command {
     /// One stage, every watt by cause at every point
     #[command(before_help = "Example: wattsieve account --rank 2")]
     Account(AccountArgs),
+    /// What became of each part: the best stage with it, or the limit that stops it
+    #[command(before_help = "Example: wattsieve fate")]
+    Fate(FateArgs),
     /// The rail as understood, and where each value comes from
     #[command(before_help = "Example: wattsieve rail")]
     Rail(RailArgs),
@@ -110,6 +113,18 @@ pub(super) struct AccountArgs {
     #[arg(long, value_name = "N", default_value_t = 1, value_parser = clap::value_parser!(u32).range(1..=10_000),
           conflicts_with_all = ["stage", "parts"])]
     pub rank: u32,
+}
+
+#[derive(Debug, Args)]
+pub(super) struct FateArgs {
+    /// Rail file; - is standard input; without it the built-in demo
+    #[arg(value_name = "RAIL")]
+    pub rail: Option<PathBuf>,
+    #[command(flatten)]
+    pub common: Common,
+    /// Give the rank of stages down to this place of the shortlist
+    #[arg(long, value_name = "N", default_value_t = 100, value_parser = clap::value_parser!(u32).range(1..=10_000))]
+    pub top: u32,
 }
 
 #[derive(Debug, Args)]

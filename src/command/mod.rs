@@ -4,6 +4,7 @@ mod account;
 mod args;
 mod audit;
 mod failure;
+mod fate;
 mod input;
 mod named;
 mod output;
@@ -46,6 +47,7 @@ pub fn run(arguments: impl IntoIterator<Item = OsString>) -> ExitCode {
     let color = match &arguments.command {
         Command::Shortlist(command) => command.common.color,
         Command::Account(command) => command.common.color,
+        Command::Fate(command) => command.common.color,
         Command::Rail(command) => command.common.color,
         Command::Audit(command) => command.common.color,
         Command::Starter(_) => args::Color::Auto,
@@ -54,6 +56,7 @@ pub fn run(arguments: impl IntoIterator<Item = OsString>) -> ExitCode {
     let done = match &arguments.command {
         Command::Shortlist(command) => shortlist::run(command),
         Command::Account(command) => account::run(command),
+        Command::Fate(command) => fate::run(command),
         Command::Rail(command) => rail::run(command),
         Command::Audit(command) => audit::run(command),
         Command::Starter(command) => starter::run(command),

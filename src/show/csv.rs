@@ -15,7 +15,7 @@ pub fn harmless(cell: &str) -> String {
     }
 }
 
-fn document(header: &[&str], rows: impl IntoIterator<Item = Vec<String>>) -> String {
+pub(super) fn document(header: &[&str], rows: impl IntoIterator<Item = Vec<String>>) -> String {
     let mut writer = csv::Writer::from_writer(Vec::new());
     // Writing to memory cannot fail, and all rows are of one length.
     let _ = writer.write_record(header);

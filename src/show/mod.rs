@@ -3,6 +3,7 @@
 pub mod account;
 pub mod audit;
 pub mod csv;
+pub mod fate;
 pub mod grid;
 pub mod json;
 pub mod number;
