@@ -37,8 +37,9 @@ pub fn relaxed(request: &Request, limit: LimitName) -> Option<Ranked> {
     pruned(&Request { tolerated: Some(within), ..any }).ranked.first().copied()
 }
 
-/// A limit on one of the sums that a burden is made of: the least sum is the least excess.
-fn sum_alone(limit: LimitName) -> Option<Worth> {
+/// A limit on one of the sums that a burden is made of, as the worth that makes that sum alone least: the least sum is the least
+/// excess.
+pub fn sum_alone(limit: LimitName) -> Option<Worth> {
     let one = NonNegative::new(1.0)?;
     let none = Worth { loss: NonNegative::ZERO, area: NonNegative::ZERO, cost: NonNegative::ZERO };
     match limit {
@@ -51,8 +52,8 @@ fn sum_alone(limit: LimitName) -> Option<Worth> {
 
 /// Branch and bound over boxes of candidates: a box in which some slot has no candidate within the best excess so far is done
 /// with; a small one is tried; any other is halved along its longest list, in the order of resistance or inductance, so that the
-/// spans of duty and ripple narrow.
-fn least_excess(request: &Request, limit: LimitName, first: f64) -> f64 {
+/// spans of duty and ripple narrow. `first` is the excess of any stage.
+pub fn least_excess(request: &Request, limit: LimitName, first: f64) -> f64 {
     let field = Field::new(request);
     let frequencies: Vec<AtFrequency> =
         request.rail.range.frequencies_hz.iter().map(|f| field.at_frequency(f.get())).collect();

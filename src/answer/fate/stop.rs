@@ -1,5 +1,7 @@
 //! Which single limit stops a part, and by how much.
 
+use rayon::iter::{IntoParallelRefIterator, ParallelIterator};
+
 use super::data::Stop;
 use super::own::OwnLimits;
 use crate::account::{LimitRow, account};
@@ -8,7 +10,7 @@ use crate::limit::{Check, LimitName};
 use crate::model::Conditions;
 use crate::rail::{Pin, Rail};
 use crate::search::forced::{Seat, Wish, forced};
-use crate::search::relax::relaxed;
+use crate::search::relax::{least_excess, sum_alone};
 use crate::search::{Ranked, Request, Tolerance};
 use crate::stage::Stage;
 
@@ -17,45 +19,82 @@ pub(super) fn stops(request: &Request, seats: &[Seat]) -> Vec<Stop> {
     let conditions = Conditions::of(request.rail);
     let own: Vec<OwnLimits> =
         seats.iter().map(|&seat| OwnLimits::of(seat, request.rail, request.parts, &conditions)).collect();
-    let mut nearest: Vec<Option<(LimitName, Ranked)>> = vec![None; seats.len()];
+    let mut nearest: Vec<Option<Nearest>> = vec![None; seats.len()];
     for limit in LimitName::ALL.into_iter().filter(|limit| limit.can_give()) {
-        let open: Vec<usize> =
-            (0..seats.len()).filter(|&at| own[at].hopeless().is_none() && own[at].may_hang_on(limit)).collect();
-        if open.is_empty() {
-            continue;
-        }
-        for (at, found) in open.iter().zip(least(request, limit, &open, seats, &own)) {
-            let nearer = |found: &Ranked| nearest[*at].is_none_or(|(_, best)| found.excess < best.excess);
-            if let Some(found) = found.filter(nearer) {
-                nearest[*at] = Some((limit, found));
-            }
+        let open: Vec<Open> = (0..seats.len())
+            .filter(|&at| own[at].hopeless().is_none() && own[at].may_hang_on(limit))
+            .map(|at| Open {
+                at,
+                seat: seats[at],
+                own_excess: own[at].least_excess(limit),
+                known_excess: nearest[at].map_or(f64::INFINITY, |(_, best)| best.excess),
+            })
+            .collect();
+        for (at, found) in nearer(request, limit, &open) {
+            nearest[at] = Some((limit, found));
         }
     }
     nearest.iter().zip(&own).map(|(nearest, own)| stop(request, *nearest, own)).collect()
 }
 
-/// The best stage with each part that breaks the limit by the least that anything with it must.
-fn least(
-    request: &Request,
-    limit: LimitName,
-    open: &[usize],
-    seats: &[Seat],
-    own: &[OwnLimits],
-) -> Vec<Option<Ranked>> {
+/// The limit that would have to give least so far, and the best stage that passes then.
+type Nearest = (LimitName, Ranked);
+
+/// A part that a limit may be what stops it.
+struct Open {
+    at: usize,
+    seat: Seat,
+    /// By how much the part alone breaks the limit.
+    own_excess: f64,
+    /// By how much another limit would have to give.
+    known_excess: f64,
+}
+
+/// The parts that need less of this limit than is known of any other, with the best stage when it gives by just that.
+fn nearer(request: &Request, limit: LimitName, open: &[Open]) -> Vec<(usize, Ranked)> {
     let any = Request { tolerated: Some(Tolerance::any(limit)), ..*request };
+    let best_within = |wanted: &[(&Open, f64)]| -> Vec<Option<Ranked>> {
+        let wishes: Vec<Wish> = wanted.iter().map(|(open, excess)| Wish { seat: open.seat, excess: *excess }).collect();
+        if wishes.is_empty() { Vec::new() } else { forced(&any, &wishes) }
+    };
+    let open: Vec<&Open> = open.iter().filter(|open| open.own_excess < short_of(open.known_excess)).collect();
     // What a part breaks by itself no partner can mend: when a stage breaks no more than that, nothing breaks less.
-    let least_own = |at: usize| own[at].least_excess(limit);
-    let wishes: Vec<Wish> = open.iter().map(|&at| Wish { seat: seats[at], excess: within(least_own(at)) }).collect();
-    let mut found = forced(&any, &wishes);
-    let rest: Vec<usize> = (0..open.len()).filter(|&place| found[place].is_none()).collect();
-    let wishes: Vec<Wish> = rest.iter().map(|&place| Wish::new(seats[open[place]])).collect();
-    for (&place, first) in rest.iter().zip(forced(&any, &wishes)) {
-        found[place] = first.and_then(|_| {
-            let rail = pinned(request, seats[open[place]]);
-            relaxed(&Request { rail: &rail, ..*request }, limit)
-        });
-    }
-    found
+    let alone: Vec<(&Open, f64)> =
+        open.iter().filter(|open| open.own_excess > 0.0).map(|open| (*open, within(open.own_excess))).collect();
+    let found: Vec<(usize, Ranked)> =
+        alone.iter().zip(best_within(&alone)).filter_map(|((open, _), found)| Some((open.at, found?))).collect();
+    let rest: Vec<(&Open, f64)> = open
+        .iter()
+        .filter(|open| found.iter().all(|(at, _)| *at != open.at))
+        .map(|open| (*open, short_of(open.known_excess)))
+        .collect();
+    let first: Vec<(&Open, Ranked)> =
+        rest.iter().zip(best_within(&rest)).filter_map(|((open, _), first)| Some((*open, first?))).collect();
+    let least: Vec<(&Open, f64)> = match sum_alone(limit) {
+        Some(worth) => {
+            let wishes: Vec<Wish> = first.iter().map(|(open, _)| Wish::new(open.seat)).collect();
+            let least = forced(&Request { worth, ..any }, &wishes);
+            let excess = |((open, first), least): (&(_, Ranked), Option<Ranked>)| {
+                (*open, within(least.map_or(first.excess, |least| least.excess)))
+            };
+            first.iter().zip(least).map(excess).collect()
+        }
+        None => first
+            .par_iter()
+            .map(|(open, first)| {
+                let rail = pinned(request, open.seat);
+                let alone = Request { rail: &rail, threads: 1, ..any };
+                (*open, within(least_excess(&alone, limit, first.excess)))
+            })
+            .collect(),
+    };
+    let last = best_within(&least);
+    found.into_iter().chain(least.iter().zip(last).filter_map(|((open, _), found)| Some((open.at, found?)))).collect()
+}
+
+/// An excess that is less by more than rounding.
+fn short_of(excess: f64) -> f64 {
+    excess * (1.0 - 1e-9) - 1e-9
 }
 
 /// An excess with the room that limits have for rounding.
