@@ -123,8 +123,12 @@ pub(super) struct FateArgs {
     #[command(flatten)]
     pub common: Common,
     /// Give the rank of stages down to this place of the shortlist
-    #[arg(long, value_name = "N", default_value_t = 100, value_parser = clap::value_parser!(u32).range(1..=10_000))]
+    #[arg(long, value_name = "N", default_value_t = 100,
+          value_parser = clap::value_parser!(u32).range(1..=10_000))]
     pub top: u32,
+    /// Find the least by which a limit must give for each part that no stage passes with, even where many parts make that long
+    #[arg(long)]
+    pub least: bool,
 }
 
 #[derive(Debug, Args)]

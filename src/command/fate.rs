@@ -18,8 +18,12 @@ pub(super) fn run(command: &FateArgs) -> Result<Done, Failure> {
     let stop = Arc::clone(&progress);
     ctrlc::set_handler(move || stop.stop())
         .map_err(|error| Failure::Machine(format!("cannot listen for Ctrl-C: {error}")))?;
-    let options =
-        Options { ranked_to: command.top as usize, threads: usize::from(common.threads), progress: Some(&progress) };
+    let options = Options {
+        ranked_to: command.top as usize,
+        least: command.least,
+        threads: usize::from(common.threads),
+        progress: Some(&progress),
+    };
     let Some(fates) = fates(&rail, &read.parts, &options) else { return Ok(Done::Stopped) };
     let text = match common.format.into() {
         Format::Table => show::fate::screen(&fates),

@@ -93,7 +93,11 @@ pub fn sentence(stop: &Stop) -> String {
         (Some(limit), Some(value), Some(bound)) => {
             let unit = limit.unit();
             let name = plain(limit.name());
-            let way = if stop.nearest.is_some() { "" } else { ", and not that alone" };
+            let way = match (&stop.nearest, stop.is_least) {
+                (None, _) => ", and not that alone",
+                (Some(_), true) => "",
+                (Some(_), false) => ", in the best stage with it",
+            };
             format!("{name}: {} where {} is the bound{way}", in_unit(value, unit), in_unit(bound, unit))
         }
         (Some(limit), ..) => plain(limit.name()),
@@ -124,6 +128,7 @@ fn part(fate: &Fate) -> Value {
             "value": stop.value,
             "bound": stop.bound,
             "nearest": stop.nearest,
+            "least": stop.is_least,
             "elsewhere": stop.elsewhere,
             "why": sentence(stop),
         }),

@@ -82,8 +82,10 @@ pub struct Stop {
     pub value: Option<f64>,
     /// What it must keep to; `None` without numbers.
     pub bound: Option<f64>,
-    /// The best of the stages that pass when the limit gives by the least that is needed.
+    /// The best of the stages that pass when the limit gives by just so much.
     pub nearest: Option<NamedStage>,
+    /// Whether no stage with the part needs less; otherwise the nearest is the best of all that need the limit to give.
+    pub is_least: bool,
     /// The nearest frequency beyond the rail's range at which it passes.
     pub elsewhere: Option<Elsewhere>,
 }

@@ -22,6 +22,8 @@ use stop::stops;
 pub struct Options<'a> {
     /// Down to which place of the shortlist ranks are given.
     pub ranked_to: usize,
+    /// Whether to find by how much a limit must give at least for each part that does not pass, however long that takes.
+    pub least: bool,
     /// Worker threads; 0 for one a processor.
     pub threads: usize,
     /// Where to hear that the search shall stop.
@@ -41,7 +43,8 @@ pub fn fates<'a>(rail: &'a Rail, parts: &'a Parts, options: &Options<'a>) -> Opt
     let found = forced(&request, &wishes);
     let stopped: Vec<Seat> =
         wishes.iter().zip(&found).filter(|(_, found)| found.is_none()).map(|(wish, _)| wish.seat).collect();
-    let mut stops: HashMap<Seat, Stop> = stopped.iter().copied().zip(stops(&request, &stopped)).collect();
+    let mut stops: HashMap<Seat, Stop> =
+        stopped.iter().copied().zip(stops(&request, &stopped, options.least)).collect();
     for (seat, elsewhere) in beyond(&request, &stopped) {
         if let Some(stop) = stops.get_mut(&seat) {
             stop.elsewhere = Some(elsewhere);

@@ -14,8 +14,13 @@ use crate::search::relax::{least_excess, sum_alone};
 use crate::search::{Ranked, Request, Tolerance};
 use crate::stage::Stage;
 
+/// Parts × inductors × frequencies × parts whose least need is searched for without being asked: beyond, that of the best stage
+/// is told.
+const QUICK: usize = 1_000_000;
+
 /// For each part, none of which passes: the limit that would have to give least, in the order of the limits where two are equal.
-pub(super) fn stops(request: &Request, seats: &[Seat]) -> Vec<Stop> {
+/// By how much it must give at least is a search for each part; `least` asks for it however long it takes.
+pub(super) fn stops(request: &Request, seats: &[Seat], least: bool) -> Vec<Stop> {
     let conditions = Conditions::of(request.rail);
     let own: Vec<OwnLimits> =
         seats.iter().map(|&seat| OwnLimits::of(seat, request.rail, request.parts, &conditions)).collect();
@@ -27,18 +32,24 @@ pub(super) fn stops(request: &Request, seats: &[Seat]) -> Vec<Stop> {
                 at,
                 seat: seats[at],
                 own_excess: own[at].least_excess(limit),
-                known_excess: nearest[at].map_or(f64::INFINITY, |(_, best)| best.excess),
+                known_excess: nearest[at].map_or(f64::INFINITY, |nearest| nearest.found.excess),
             })
             .collect();
-        for (at, found) in nearer(request, limit, &open) {
-            nearest[at] = Some((limit, found));
+        for (at, found, is_least) in nearer(request, limit, &open, least) {
+            nearest[at] = Some(Nearest { limit, found, is_least });
         }
     }
     nearest.iter().zip(&own).map(|(nearest, own)| stop(request, *nearest, own)).collect()
 }
 
 /// The limit that would have to give least so far, and the best stage that passes then.
-type Nearest = (LimitName, Ranked);
+#[derive(Debug, Clone, Copy)]
+struct Nearest {
+    limit: LimitName,
+    found: Ranked,
+    /// Whether no stage with the part needs less of the limit.
+    is_least: bool,
+}
 
 /// A part that a limit may be what stops it.
 struct Open {
@@ -50,8 +61,9 @@ struct Open {
     known_excess: f64,
 }
 
-/// The parts that need less of this limit than is known of any other, with the best stage when it gives by just that.
-fn nearer(request: &Request, limit: LimitName, open: &[Open]) -> Vec<(usize, Ranked)> {
+/// The parts that need less of this limit than is known of any other, with the best stage when it gives by just that, and
+/// whether that is the least.
+fn nearer(request: &Request, limit: LimitName, open: &[Open], always: bool) -> Vec<(usize, Ranked, bool)> {
     let any = Request { tolerated: Some(Tolerance::any(limit)), ..*request };
     let best_within = |wanted: &[(&Open, f64)]| -> Vec<Option<Ranked>> {
         let wishes: Vec<Wish> = wanted.iter().map(|(open, excess)| Wish { seat: open.seat, excess: *excess }).collect();
@@ -61,15 +73,18 @@ fn nearer(request: &Request, limit: LimitName, open: &[Open]) -> Vec<(usize, Ran
     // What a part breaks by itself no partner can mend: when a stage breaks no more than that, nothing breaks less.
     let alone: Vec<(&Open, f64)> =
         open.iter().filter(|open| open.own_excess > 0.0).map(|open| (*open, within(open.own_excess))).collect();
-    let found: Vec<(usize, Ranked)> =
-        alone.iter().zip(best_within(&alone)).filter_map(|((open, _), found)| Some((open.at, found?))).collect();
+    let found: Vec<(usize, Ranked, bool)> =
+        alone.iter().zip(best_within(&alone)).filter_map(|((open, _), found)| Some((open.at, found?, true))).collect();
     let rest: Vec<(&Open, f64)> = open
         .iter()
-        .filter(|open| found.iter().all(|(at, _)| *at != open.at))
+        .filter(|open| found.iter().all(|(at, ..)| *at != open.at))
         .map(|open| (*open, short_of(open.known_excess)))
         .collect();
     let first: Vec<(&Open, Ranked)> =
         rest.iter().zip(best_within(&rest)).filter_map(|((open, _), first)| Some((*open, first?))).collect();
+    if sum_alone(limit).is_none() && !always && work(request, first.len()) > QUICK {
+        return found.into_iter().chain(first.into_iter().map(|(open, first)| (open.at, first, false))).collect();
+    }
     let least: Vec<(&Open, f64)> = match sum_alone(limit) {
         Some(worth) => {
             let wishes: Vec<Wish> = first.iter().map(|(open, _)| Wish::new(open.seat)).collect();
@@ -89,7 +104,15 @@ fn nearer(request: &Request, limit: LimitName, open: &[Open]) -> Vec<(usize, Ran
             .collect(),
     };
     let last = best_within(&least);
-    found.into_iter().chain(least.iter().zip(last).filter_map(|((open, _), found)| Some((open.at, found?)))).collect()
+    let last = least.iter().zip(last).filter_map(|((open, _), found)| Some((open.at, found?, true)));
+    found.into_iter().chain(last).collect()
+}
+
+/// How much there is to look at in a search for the least of so many parts.
+fn work(request: &Request, searched: usize) -> usize {
+    let parts = request.parts;
+    let all = parts.switches.len() + parts.diodes.len() + parts.inductors.len() + parts.capacitors.len();
+    searched * request.rail.range.frequencies_hz.len() * parts.inductors.len() * all
 }
 
 /// An excess that is less by more than rounding.
@@ -114,13 +137,20 @@ fn pinned(request: &Request, seat: Seat) -> Rail {
     rail
 }
 
-fn stop(request: &Request, nearest: Option<(LimitName, Ranked)>, own: &OwnLimits) -> Stop {
-    let nothing = Stop { limit: None, value: None, bound: None, nearest: None, elsewhere: None };
+fn stop(request: &Request, nearest: Option<Nearest>, own: &OwnLimits) -> Stop {
+    let nothing = Stop { limit: None, value: None, bound: None, nearest: None, is_least: true, elsewhere: None };
     match (nearest, own.hopeless()) {
-        (Some((limit, ranked)), _) => {
-            let broken = worst_row(request, limit, &ranked.stage);
+        (Some(Nearest { limit, found, is_least }), _) => {
+            let broken = worst_row(request, limit, &found.stage);
             let (value, bound) = broken.map_or((None, None), |row| (row.value, row.bound));
-            Stop { limit: Some(limit), value, bound, nearest: Some(ranked.stage.named(request.parts)), ..nothing }
+            Stop {
+                limit: Some(limit),
+                value,
+                bound,
+                nearest: Some(found.stage.named(request.parts)),
+                is_least,
+                ..nothing
+            }
         }
         (None, Some(limit)) => Stop { limit: Some(limit), ..nothing },
         (None, None) => match own.always() {
