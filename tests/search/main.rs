@@ -1,5 +1,6 @@
 //! The pruned search against the exhaustive one, on random small problems.
 
+mod fate;
 mod forced;
 mod problem;
 
