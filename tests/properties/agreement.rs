@@ -194,6 +194,7 @@ fn every_value_beside_a_limit_is_that_of_a_plain_reading() {
                     of(TYPICAL, &|n, input_v, _| Some(input_swing_v(n, stage, least_f(input, ni, input_v), input_ohm)))
                 }
                 (LimitName::LoadStep, _) => step_v(rail, inductor, output_f, output_ohm),
+                (LimitName::DriveCurrent, _) => Some(plain::supply_a(rail, parts, stage)),
                 (LimitName::DeadTime, slot) => {
                     let (high, choice) = match slot {
                         "high_switch" => (true, stage.high_switch),
@@ -226,6 +227,7 @@ fn every_value_beside_a_limit_is_that_of_a_plain_reading() {
         LimitName::InputRipple,
         LimitName::LoadStep,
         LimitName::DeadTime,
+        LimitName::DriveCurrent,
     ];
     for limit in rows {
         assert!(count.get(&limit).is_some_and(|&rows| rows >= 20), "too few rows: {count:?}");
@@ -255,4 +257,30 @@ fn the_ripples_of_every_point_are_those_of_a_plain_reading() {
             assert!(close(reading.input_ripple_v, expected_v, 1e-6, 0.0), "seed {seed} {expected_v} {reading:?}");
         }
     });
+}
+
+#[test]
+fn the_point_of_a_limit_is_where_its_value_is_found() {
+    let mut compared = std::collections::BTreeSet::new();
+    each(3_500..3_600, 3, |problem, stage, seed| {
+        let (rail, parts) = (&problem.rail, &problem.parts);
+        let account = account(rail, parts, stage);
+        for row in &account.limits {
+            let (Some(index), Some(value)) = (row.point, row.value) else { continue };
+            let worst = Spread { worst: true, inductance_factor: 1.0 };
+            let Some(point) = account.points.get(index) else { panic!("seed {seed} {row:?}") };
+            let Outcome::Runs(n) = plain::solve(rail, parts, stage, point.input_v, point.load_a, worst) else {
+                continue;
+            };
+            let expected = match (row.limit, row.slot) {
+                (LimitName::Junction, "high_switch") => n.temperatures.high_switch,
+                (LimitName::Junction, _) => n.temperatures.rectifier,
+                (LimitName::Winding, _) => n.temperatures.inductor,
+                _ => continue,
+            };
+            compared.insert(index);
+            assert!(close(value, expected, 1e-8, 10.0), "seed {seed} {row:?}: {expected} expected");
+        }
+    });
+    assert!(compared.len() >= 6, "only at {compared:?}");
 }

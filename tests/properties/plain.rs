@@ -149,6 +149,21 @@ pub fn turn_off_s(switch: &Switch, count: u32, rail: &Rail, high: bool) -> f64 {
     ohm * n * (2.0 * over / (gate_v + vpl) + miller + qgs2 / ((vth + vpl) / 2.0))
 }
 
+/// Current that the gate supply must give, A.
+pub fn supply_a(rail: &Rail, parts: &Parts, stage: &Stage) -> f64 {
+    let gate_v = rail.drive.voltage_v.get();
+    let charge_c = |choice: wattsieve::stage::Choice, with_miller: bool| {
+        let switch = &parts.switches[choice.index];
+        let miller_c = if with_miller { 0.0 } else { switch.gate_drain_charge_c.get() };
+        (f64::from(choice.count) * (gate_charge(switch, gate_v) - miller_c)).max(0.0)
+    };
+    let rectifier_c = match stage.rectifier_kind {
+        RectifierKind::Switch => charge_c(stage.rectifier, false),
+        RectifierKind::Diode => 0.0,
+    };
+    (charge_c(stage.high_switch, true) + rectifier_c) * stage.frequency_hz + rail.drive.bias_a.get()
+}
+
 /// V0 and Rd of one diode at 25 °C, by the two points that bracket the current of one.
 fn forward(diode: &Diode, current_a: f64) -> (f64, f64) {
     let points = diode.forward_drop_v.points();
